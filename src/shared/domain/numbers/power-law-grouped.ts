@@ -1,0 +1,49 @@
+import { demandCount, demandPositive, demandSameLength } from './demand.ts';
+import { missing, type Missing } from './missing.ts';
+import type { PowerLaw } from './power-law.ts';
+import { findRoot } from './root.ts';
+
+/** Fit, and mean use between events at the end of the last group. */
+export type GroupedPowerLaw = PowerLaw & { currentMtbf: number };
+
+/**
+ * Power-law process by maximum likelihood when only counts between inspections are known.
+ * @param ends use at the end of each group, rising, the first group beginning at 0.
+ * @param counts events in each group.
+ * Solves Σ nᵢ·[(Tᵢᵇ ln Tᵢ − Tᵢ₋₁ᵇ ln Tᵢ₋₁)/(Tᵢᵇ − Tᵢ₋₁ᵇ) − ln T] = 0. Source: MIL-HDBK-189, appendix on grouped data.
+ * Missing when all events fall into one end group, where the likelihood has no maximum.
+ */
+export function fitGroupedPowerLaw(ends: readonly number[], counts: readonly number[]): GroupedPowerLaw | Missing<'too-few' | 'no-maximum'> {
+  demandSameLength('ends and counts', ends, counts);
+  ends.forEach((end, i) => {
+    demandPositive('end', end);
+    if (i > 0 && end <= (ends[i - 1] as number)) throw new RangeError('ends must rise');
+  });
+  counts.forEach((count) => demandCount('count', count));
+  const events = counts.reduce((sum, count) => sum + count, 0);
+  const last = ends[ends.length - 1];
+  if (events === 0 || last === undefined || ends.length < 2) return missing('too-few');
+  if (counts[0] === events || counts[counts.length - 1] === events) return missing('no-maximum');
+  const relative = ends.map((end) => end / last);
+  const score = (logShape: number): number => groupedScore(relative, counts, Math.exp(logShape));
+  const shape = Math.exp(findRoot(score, Math.log(1e-4), Math.log(200)));
+  return { shape, scale: events / last ** shape, currentMtbf: last / (events * shape) };
+}
+
+/** dℓ/d(shape) with times as a share of the whole, so that the last logarithm is 0. */
+function groupedScore(ends: readonly number[], counts: readonly number[], shape: number): number {
+  let sum = 0;
+  for (let i = 0; i < ends.length; i += 1) {
+    if (counts[i] === 0) continue;
+    const end = ends[i] as number;
+    const start = i === 0 ? 0 : (ends[i - 1] as number);
+    if (start === 0) {
+      sum += (counts[i] as number) * Math.log(end);
+      continue;
+    }
+    // Divided through by endᵇ: (ln end − qᵇ ln start)/(1 − qᵇ), q = start/end.
+    const q = Math.exp(shape * Math.log(start / end));
+    sum += ((counts[i] as number) * (Math.log(end) - q * Math.log(start))) / (1 - q);
+  }
+  return sum + counts.reduce((all, count) => all + count, 0) / shape;
+}
