@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { ISOLATION_STEPS, isolationRecorded, mayRecord, nothingRecorded, RELEASE_STEPS, releaseRecorded } from './lockout-steps.ts';
+import { LAST_LOCKOUT_STEP } from './work.ts';
 
 const at = (...codes: string[]): Record<string, number> => Object.fromEntries(codes.map((code, i) => [code, i + 1]));
 const before = ISOLATION_STEPS.map((step) => step.code);
@@ -20,7 +21,7 @@ describe('lockout record', () => {
 
   it('refuses to try the start before stored energy is released', () => {
     const locked = before.slice(0, before.indexOf('energy-released'));
-    expect(mayRecord('tried', true, at(...locked))).toMatchObject({ code: 'lockout.step-out-of-order', waitsFor: 'energy-released' });
+    expect(mayRecord('try', true, at(...locked))).toMatchObject({ code: 'lockout.step-out-of-order', waitsFor: 'energy-released' });
   });
 
   it('takes the own lock off last', () => {
@@ -36,6 +37,10 @@ describe('lockout record', () => {
   it('holds the list before still once release has begun, and allows release half way', () => {
     expect(mayRecord('tools-out', true, at('told-desk'))).toEqual({ ok: true });
     expect(mayRecord('machine-stopped', true, at('told-desk', 'tools-out'))).toMatchObject({ waitsFor: 'tools-out' });
+  });
+
+  it('ends with the step from which the fold says that somebody is in the machine', () => {
+    expect(ISOLATION_STEPS.at(-1)?.code).toBe(LAST_LOCKOUT_STEP);
   });
 
   it('knows no other steps', () => {

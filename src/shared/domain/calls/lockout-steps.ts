@@ -18,7 +18,7 @@ export const ISOLATION_STEPS = [
   { code: 'lift-isolated', phase: 'isolate' },
   { code: 'lock-and-tag', phase: 'lock' },
   { code: 'energy-released', phase: 'release-energy' },
-  { code: 'tried', phase: 'try' },
+  { code: 'try', phase: 'try' },
 ] as const satisfies readonly { code: string; phase: LockoutPhase }[];
 
 /** Steps before the machine may run again, in the order of (e): the own lock comes off last. */
