@@ -1,0 +1,86 @@
+// A process of ours that is kept running: started again when it dies, ended in order. It ends itself when our channel closes.
+import { spawn } from 'node:child_process';
+import path from 'node:path';
+import { isAlive, pause } from './processes.mjs';
+import { root, say } from './steps.mjs';
+
+const FIRST_PAUSE_MS = 500;
+const LONGEST_PAUSE_MS = 10_000;
+/** A process that ran this long is taken for sound: its next death begins with the shortest pause again. */
+const SOUND_AFTER_MS = 30_000;
+const STOP_WITHIN_MS = 10_000;
+
+/**
+ * Starts `file` (TypeScript) and keeps it running. `output` is what spawn takes
+ * for standard output and error. `onMessage` hears what it sends; `onFirstExit`
+ * decides about a death before `settle()` was called: then it isn't started again.
+ */
+export function keepRunning({ name, file, args = [], env, output, onMessage = () => {}, onFirstExit = () => {} }) {
+  let wanted = true;
+  let settled = false;
+  let child;
+  let failures = 0;
+  let timer;
+
+  const launch = () => {
+    const began = Date.now();
+    child = spawn(process.execPath, ['--import', 'tsx', path.join(root, file), ...args], {
+      cwd: root,
+      env,
+      detached: true, // its own group, so that ctrl-C in the terminal reaches us alone and we end it in order
+      stdio: ['ignore', output, output, 'ipc'],
+    });
+    child.on('message', onMessage);
+    child.once('error', (error) => say(`${name} can't be started: ${error.message}`));
+    child.once('exit', (code, signal) => onExit(began, signal ?? `exit ${code}`));
+  };
+  const onExit = (began, how) => {
+    if (!wanted) return;
+    if (!settled) {
+      wanted = false;
+      onFirstExit(how);
+      return;
+    }
+    if (Date.now() - began > SOUND_AFTER_MS) failures = 0;
+    const wait = Math.min(FIRST_PAUSE_MS * 2 ** failures, LONGEST_PAUSE_MS);
+    failures += 1;
+    say(`${name} stopped (${how}); starting it again`);
+    timer = setTimeout(launch, wait);
+  };
+
+  launch();
+  return {
+    pid: () => child.pid,
+    /** From now on it is started again when it dies. */
+    settle: () => {
+      settled = true;
+    },
+    /** Ends it and starts it anew at once. */
+    restart: async () => {
+      wanted = false;
+      clearTimeout(timer);
+      await end(child);
+      wanted = true;
+      launch();
+    },
+    stop: async () => {
+      wanted = false;
+      clearTimeout(timer);
+      await end(child);
+    },
+  };
+}
+
+/** TERM to the process; after a while KILL to all of its group. */
+async function end(child) {
+  if (child?.pid === undefined) return;
+  const until = Date.now() + STOP_WITHIN_MS;
+  if (child.exitCode === null && child.signalCode === null) child.kill('SIGTERM');
+  while (isAlive(child.pid) && Date.now() < until) await pause(20);
+  try {
+    process.kill(-child.pid, 'SIGKILL'); // it, if it didn't listen, and whatever it left behind
+  } catch {
+    // nothing was left
+  }
+  while (isAlive(child.pid)) await pause(20);
+}

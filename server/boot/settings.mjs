@@ -1,0 +1,87 @@
+// The settings as the boot needs them, checked before anything is installed. `server/config.ts` reads them for the program.
+import fs from 'node:fs';
+import path from 'node:path';
+import { isPortFree } from './processes.mjs';
+import { runningDatabase } from './database-server.mjs';
+import { root, StopError } from './steps.mjs';
+
+const LOG_LEVELS = ['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent'];
+
+const port = (fallback) => (text) => {
+  if (text === undefined) return fallback;
+  if (!/^\d{1,5}$/.test(text) || Number(text) < 1 || Number(text) > 65_535) throw new Error('must be a port number, 1 to 65535');
+  return Number(text);
+};
+const oneOf = (words, fallback) => (text) => {
+  if (text === undefined) return fallback;
+  if (!words.includes(text)) throw new Error(`must be one of ${words.join(', ')}`);
+  return text;
+};
+const url = (...schemes) => (text) => {
+  if (text === undefined) return null;
+  if (!URL.canParse(text) || !schemes.includes(new URL(text).protocol.slice(0, -1)) || new URL(text).hostname === '') {
+    throw new Error(`must be a URL that begins with ${schemes.map((scheme) => `${scheme}://`).join(' or ')}`);
+  }
+  return text;
+};
+
+const VARIABLES = {
+  PORT: port(4310),
+  DB_PORT: port(3316),
+  DATA_DIR: (text) => path.resolve(root, text ?? '.data'),
+  DATABASE_URL: url('mysql', 'mariadb'),
+  SMTP_URL: url('smtp', 'smtps'),
+  PUBLIC_URL: url('http', 'https'),
+  LANEWRIGHT_DEMO: oneOf(['on', 'off'], 'on'),
+  NODE_ENV: oneOf(['production', 'development', 'test'], 'development'),
+  LOG_LEVEL: oneOf(LOG_LEVELS, 'info'),
+};
+
+/** Reads all; an empty variable counts as not given. Throws a `StopError` that names each bad one. */
+export function readSettings(env) {
+  const problems = [];
+  const read = {};
+  for (const [name, parse] of Object.entries(VARIABLES)) {
+    try {
+      read[name] = parse(env[name] === '' ? undefined : env[name]);
+    } catch (error) {
+      // the value of a URL is not repeated: it may hold a password
+      problems.push(`${name}${name.endsWith('_URL') ? '' : `=${env[name]}: it`} ${error.message}.`);
+    }
+  }
+  if (read.DATABASE_URL === null && read.PORT !== undefined && read.PORT === read.DB_PORT) problems.push(`PORT and DB_PORT are both ${read.PORT}.`);
+  if (problems.length > 0) throw new StopError(problems.join('\n'));
+  const production = read.NODE_ENV === 'production';
+  return {
+    port: read.PORT,
+    dbPort: read.DB_PORT,
+    dataDir: read.DATA_DIR,
+    databaseUrl: read.DATABASE_URL,
+    smtpUrl: read.SMTP_URL,
+    publicUrl: read.PUBLIC_URL,
+    production,
+    demo: read.LANEWRIGHT_DEMO === 'on' && !production,
+  };
+}
+
+/** Makes the data folder, or stops with its name. */
+export function makeDataDir(settings) {
+  try {
+    fs.mkdirSync(settings.dataDir, { recursive: true });
+    fs.accessSync(settings.dataDir, fs.constants.W_OK);
+  } catch (error) {
+    throw new StopError(`DATA_DIR=${settings.dataDir}: it can't be written to (${error.code}).`);
+  }
+}
+
+/** Stops with the name of a port that somebody else has. */
+export async function checkPorts(settings) {
+  if (!(await isPortFree(settings.port, ['0.0.0.0', '::']))) throw new StopError(`PORT=${settings.port}: it is taken by another program.`);
+  if (settings.databaseUrl !== null) return;
+  await checkDatabasePort(settings);
+}
+
+export async function checkDatabasePort(settings) {
+  if (runningDatabase(settings.dataDir)?.port === settings.dbPort) return;
+  if (!(await isPortFree(settings.dbPort))) throw new StopError(`DB_PORT=${settings.dbPort}: it is taken by another program.`);
+}
