@@ -27,7 +27,7 @@ export const laneView = z.object({
   /** Strength 0–1 is an estimate from deliveries and hours; length in feet is null while no pattern of that name is known. */
   film: z.nullable(z.object({
     lengthFt: z.nullable(z.number()), strength: z.number(), deliveries: z.int(), at: instant, pattern: z.nullable(z.string()),
-    revision: z.nullable(z.int()), verified: z.boolean(), freshness: z.enum(['fresh', 'used', 'worn']),
+    revision: z.nullable(z.int()), verified: z.boolean(), freshness: z.enum(['fresh', 'ageing', 'worn']),
   })),
   brokenOff: z.boolean(),
   /** A machine is at work here; `since` and the time a lane of that machine, ms, place it on the lane (an estimate). */
