@@ -15,18 +15,30 @@ export const callDetail = z.extend(callView, {
     last: z.array(z.object({ at: instant, equipment: z.enum(EQUIPMENT), cause: z.nullable(z.string()), note: z.nullable(z.string()), by: z.nullable(z.string()), downMs: z.nullable(z.int()) })),
   }),
   neighbour: z.nullable(z.object({ lane: laneNumber, waits: z.boolean() })),
+  outOfService: z.nullable(z.object({ since: instant, reason: z.string(), by: z.string() })),
+  /** Family of this lane's pinsetter, where the centre has said it: which causes and which lockout wording fit. */
+  family: z.nullable(z.enum(['free-fall', 'string'])),
+  /** How often each cause ended a call on this kind of equipment here in the last 90 days, by code. */
+  causeTimes: z.record(z.string(), z.int()),
 });
 export type CallDetail = z.infer<typeof callDetail>;
+
+export const closedCall = z.extend(callView, {
+  closedAt: instant, closedBy: z.nullable(z.string()), cause: z.nullable(z.string()), note: z.nullable(z.string()), downMs: z.nullable(z.int()),
+});
+export type ClosedCall = z.infer<typeof closedCall>;
 
 const callParams = z.extend(centreParams, { call: uuid });
 const at = '/api/centres/:centre/calls';
 const work = { permission: 'call.work' as const, params: callParams, response: callDetail, method: 'POST' as const };
 const closed = ['call.unknown', 'call.already-cleared'] as const;
+/** Dangers are answered by whoever is nearest; machine calls by mechanics (`call.desk-answers-dangers`). */
+const answer = { ...work, permission: 'call.answer' as const };
 
 export const callContracts = {
   list: contract({
     id: 'calls.list', method: 'GET', path: at, permission: 'call.see', summary: 'Open calls, and those closed this business day', params: centreParams,
-    response: z.object({ open: z.array(callView), closed: z.array(callView) }),
+    response: z.object({ open: z.array(callView), closed: z.array(closedCall) }),
   }),
   see: contract({ id: 'calls.see', method: 'GET', path: `${at}/:call`, permission: 'call.see', summary: 'One call with its steps and the history of its lane', params: callParams, response: callDetail, refusals: ['call.unknown'] }),
   raise: contract({
@@ -35,15 +47,25 @@ export const callContracts = {
     body: z.object({ lane: laneNumber, equipment: z._default(z.enum(EQUIPMENT), 'pinsetter'), safety: z.optional(z.enum(SAFETY_KINDS)), text: z.optional(note(300)) }),
     response: callDetail, refusals: ['lane.unknown'],
   }),
-  acknowledge: contract({ ...work, id: 'calls.acknowledge', path: `${at}/:call/acknowledge`, summary: 'Say "mine"', refusals: [...closed, 'call.already-acknowledged'] }),
-  onLane: contract({ ...work, id: 'calls.onLane', path: `${at}/:call/on-lane`, summary: 'The mechanic is on the lane', refusals: [...closed, 'call.already-on-lane'] }),
+  acknowledge: contract({
+    ...answer, id: 'calls.acknowledge', path: `${at}/:call/acknowledge`, summary: 'Say "mine"',
+    refusals: [...closed, 'call.already-acknowledged', 'call.out-of-service', 'call.desk-answers-dangers'],
+  }),
+  takeOver: contract({
+    ...work, id: 'calls.takeOver', path: `${at}/:call/take-over`, summary: 'Take over from the mechanic who has it',
+    refusals: [...closed, 'call.not-acknowledged', 'call.already-yours', 'call.mechanic-in-machine', 'call.out-of-service'],
+  }),
+  onLane: contract({
+    ...answer, id: 'calls.onLane', path: `${at}/:call/on-lane`, summary: 'The mechanic is on the lane',
+    refusals: [...closed, 'call.already-on-lane', 'call.out-of-service', 'call.desk-answers-dangers'],
+  }),
   clear: contract({
-    ...work, id: 'calls.clear', path: `${at}/:call/clear`, summary: 'Clear with cause and note: back running', body: z.object({ cause: line(60), note: z.optional(note(500)) }),
-    refusals: [...closed, 'call.cause-unknown', 'call.mechanic-in-machine', 'call.out-of-service'],
+    ...answer, id: 'calls.clear', path: `${at}/:call/clear`, summary: 'Clear with cause and note: back running', body: z.object({ cause: line(60), note: z.optional(note(500)) }),
+    refusals: [...closed, 'call.cause-unknown', 'call.mechanic-in-machine', 'call.out-of-service', 'call.desk-answers-dangers'],
   }),
   park: contract({
     ...work, id: 'calls.park', path: `${at}/:call/park`, summary: 'Park with a reason and an end', body: z.object({ reason: line(200), until: instant }),
-    refusals: [...closed, 'call.safety-cannot-be-parked', 'call.park-end-invalid'],
+    refusals: [...closed, 'call.safety-cannot-be-parked', 'call.park-end-invalid', 'call.mechanic-in-machine', 'call.out-of-service'],
   }),
   unpark: contract({ ...work, id: 'calls.unpark', path: `${at}/:call/unpark`, summary: 'Take up a parked call again', refusals: [...closed, 'call.not-parked'] }),
   outOfService: contract({
@@ -62,5 +84,10 @@ export const callContracts = {
   lockoutRelease: contract({
     ...work, id: 'calls.lockoutRelease', path: `${at}/:call/lockout/release`, summary: 'End the record: tools out, guards on, people clear, told, own lock off',
     refusals: [...closed, 'lockout.not-begun', 'lockout.release-incomplete', 'lockout.other-mechanic'],
+  }),
+  lockoutLeftBehind: contract({
+    ...work, id: 'calls.lockoutLeftBehind', path: `${at}/:call/lockout/left-behind`, permission: 'lockout.left-behind',
+    summary: 'A lock left behind was removed by the written procedure: the manager ends the record', body: z.object({ procedure: line(300) }),
+    refusals: [...closed, 'lockout.not-begun'],
   }),
 };

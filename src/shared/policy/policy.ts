@@ -44,6 +44,10 @@ export const POLICY = {
   'call.see': { to: staff },
   'call.raise': { to: staff },
   'call.work': { to: ['manager', 'mechanic'] },
+  /** Dangers are the desk's to answer too; the command refuses it a machine call. */
+  'call.answer': { to: staff },
+  /** Only the manager records that a lock left behind was removed by the centre's procedure. */
+  'lockout.left-behind': { to: ['manager'] },
   'run.see': { to: staff },
   'run.record': { to: ['manager', 'mechanic'] },
   'pattern.edit': { to: ['manager', 'mechanic'] },

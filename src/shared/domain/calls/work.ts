@@ -70,7 +70,7 @@ function lockout(call: Call, fact: FactOf<'lockout.begun'> | FactOf<'lockout.ste
     return { ...call, lockout: { by, begunAt: at, steps: {}, inMachineSince: null, releasedAt: null, alarmAt: null }, steps: steps('lockout-begun') };
   }
   if (!call.lockout) return call;
-  if (fact.type === 'lockout.released') return { ...call, lockout: { ...call.lockout, releasedAt: at }, steps: steps('lockout-released') };
+  if (fact.type === 'lockout.released') return { ...call, lockout: { ...call.lockout, releasedAt: at }, steps: steps('lockout-released', fact.data.leftBehind) };
   const { step, done } = fact.data;
   const { [step]: _before, ...others } = call.lockout.steps;
   const last = step === LAST_LOCKOUT_STEP;

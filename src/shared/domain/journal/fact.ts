@@ -41,7 +41,8 @@ export interface PersonData {
   'lane.back-in-service': { lane: number };
   'lockout.begun': { call: string };
   'lockout.stepped': { call: string; step: string; done: boolean };
-  'lockout.released': { call: string };
+  /** `leftBehind`: how a lock that its owner left was removed, in the manager's words. */
+  'lockout.released': { call: string; leftBehind?: string };
   'run.planned': { machine: string; run: string; pattern: string; revision: number; lanes: number[]; startAt: number };
   'run.cancelled': { machine: string; run: string; reason: string };
   'session.confirmed': { session: string; lanes: number[] };
