@@ -1,5 +1,6 @@
 import type { Knex } from 'knex';
 import { setTimeout as pause } from 'node:timers/promises';
+import { beforeCommit } from './before-commit.ts';
 import { isDuplicate, isLostRace } from './errors.ts';
 
 /** How a unit of work is repeated. */
@@ -33,7 +34,11 @@ export async function unitOfWork<T>(
   const attempts = options.attempts ?? ATTEMPTS;
   for (let attempt = 1; ; attempt += 1) {
     try {
-      return await db.transaction(work);
+      return await db.transaction(async (trx) => {
+        const result = await work(trx);
+        await beforeCommit(trx);
+        return result;
+      });
     } catch (error) {
       if (attempt >= attempts || !mayRepeat(error, options.repeatOnDuplicate ?? [])) throw error;
       await pause(FIRST_PAUSE_MS * 2 ** (attempt - 1) * (0.5 + Math.random()));

@@ -12,6 +12,19 @@ export interface CentreRef {
   lanes: number;
 }
 
+/** What sign-in and the wall's link need of HTTP itself; no other handler does. */
+export interface HttpSide {
+  /** The request's cookies as sent; undefined: none. */
+  cookies: string | undefined;
+  /** Address of the caller, and how its program calls itself. */
+  address: string;
+  agent: string;
+  /** Puts a `Set-Cookie` header on the answer. */
+  setCookie(cookie: string): void;
+  /** Answers with `Location` (303); the result of the handler must then be null. */
+  redirect(location: string): void;
+}
+
 /** What a handler gets: already authenticated, allowed by the policy table, and validated. */
 export interface Request<C> {
   actor: Actor;
@@ -22,6 +35,7 @@ export interface Request<C> {
   body: BodyOf<C>;
   /** Server time, epoch ms. */
   now: number;
+  http: HttpSide;
 }
 
 /** One route ready to be mounted: made by `serve(contract, handler)`. */
@@ -30,13 +44,20 @@ export interface Route {
   /** League that a request is about, where the policy row asks for it; undefined: none. */
   league?: (request: { centre: CentreRef; params: Record<string, unknown> }) => Promise<string | undefined>;
   handle: (request: Request<Contract>) => Promise<unknown>;
+  /** The answer holds a secret that is shown once: it isn't kept for a repeat with the same Idempotency-Key. */
+  secret?: boolean;
+}
+
+export interface ServeOptions<C> {
+  league?: (request: { centre: CentreRef; params: ParamsOf<C> }) => Promise<string | undefined>;
+  secret?: boolean;
 }
 
 /** Binds a handler to its contract. `league` says which league's matter a request is (policy: a secretary's own only). */
 export function serve<C extends Contract>(
   contract: C,
   handle: (request: Request<C>) => Promise<ResponseOf<C>>,
-  options: { league?: (request: { centre: CentreRef; params: ParamsOf<C> }) => Promise<string | undefined> } = {},
+  options: ServeOptions<C> = {},
 ): Route {
-  return { contract, handle: handle as Route['handle'], league: options.league as Route['league'] };
+  return { contract, handle: handle, league: options.league as Route['league'], secret: options.secret };
 }
