@@ -25,8 +25,13 @@ export function fitGroupedPowerLaw(ends: readonly number[], counts: readonly num
   if (events === 0 || last === undefined || ends.length < 2) return missing('too-few');
   if (counts[0] === events || counts[counts.length - 1] === events) return missing('no-maximum');
   const relative = ends.map((end) => end / last);
-  const score = (logShape: number): number => groupedScore(relative, counts, Math.exp(logShape));
-  const shape = Math.exp(findRoot(score, Math.log(1e-4), Math.log(200)));
+  const score = (shape: number): number => groupedScore(relative, counts, shape);
+  // Positive near 0 and negative far out, as not all events lie in one end group.
+  let low = 1;
+  while (score(low) < 0) low /= 2;
+  let high = 2 * low;
+  while (score(high) > 0) high *= 2;
+  const shape = findRoot(score, low, high);
   return { shape, scale: events / last ** shape, currentMtbf: last / (events * shape) };
 }
 
@@ -45,5 +50,5 @@ function groupedScore(ends: readonly number[], counts: readonly number[], shape:
     const q = Math.exp(shape * Math.log(start / end));
     sum += ((counts[i] as number) * (Math.log(end) - q * Math.log(start))) / (1 - q);
   }
-  return sum + counts.reduce((all, count) => all + count, 0) / shape;
+  return sum;
 }
