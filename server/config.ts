@@ -69,3 +69,6 @@ function complaint(name: string, given: Record<string, string | undefined>, mess
   if (given[name] === undefined) return `${name} is missing.`;
   return name.endsWith('_URL') ? `${name} ${message}.` : `${name}=${given[name]}: it ${message}.`;
 }
+
+/** The settings of this process. */
+export const configFromEnvironment = (): Config => readConfig(process.env);

@@ -1,0 +1,37 @@
+import { type Anchor, careEvents, careOf, careTakes } from './care.ts';
+import type { DeviceEvent } from './events.ts';
+import { type Grain, playEvents } from './play.ts';
+import { type Block, leagueBlocks, MINUTE, type NightKey, openBlocks } from './timetable.ts';
+import { troubleEvents } from './trouble.ts';
+
+export type { Anchor } from './care.ts';
+export type { NightKey } from './timetable.ts';
+
+/** While a newcomer looks on: one lane of open play stops within the first minute, one of a league a little later. */
+const FIRST_STOP = { lane: 14, after: 50_000, lasts: 7 * MINUTE };
+const SECOND_STOP = { lane: 9, after: 5 * MINUTE, lasts: 6 * MINUTE };
+
+/** Everything the invented house tells of one business day, in the order of time. The same key gives the same night. */
+export function nightEvents(night: NightKey, grain: Grain, anchor: Anchor | null): DeviceEvent[] {
+  const care = careOf(night, anchor);
+  const shown = anchor ? [shownBlock(anchor)] : [];
+  const leagues = leagueBlocks(night);
+  const open = openBlocks(night, [...leagues, ...careTakes(care), ...shown]);
+  const play = [...leagues, ...shown, ...open].flatMap((block) => playEvents(night, block, grain, anchor ? stopsShown(block, anchor) : []));
+  const events = [...play, ...care.flatMap((run) => careEvents(night, run)), ...troubleEvents(night, anchor !== null)];
+  return events.sort((a, b) => a.time - b.time || (a.id < b.id ? -1 : 1));
+}
+
+function shownBlock(anchor: Anchor): Block {
+  const from = anchor.at - 26 * MINUTE;
+  return { lane: FIRST_STOP.lane, place: 'shown', kind: 'open', label: null, from, to: anchor.at + 52 * MINUTE, frames: null, bowlers: 4, warmUpMs: 0 };
+}
+
+function stopsShown(block: Block, anchor: Anchor): { from: number; to: number }[] {
+  const inside = (at: number) => block.from + block.warmUpMs < at && at < block.to;
+  return [FIRST_STOP, SECOND_STOP]
+    .filter((stop) => stop.lane === block.lane)
+    .map((stop) => Math.max(anchor.at + stop.after, block.frames === null ? 0 : block.from + block.warmUpMs + 7 * MINUTE))
+    .filter(inside)
+    .map((from) => ({ from, to: from + (block.lane === FIRST_STOP.lane ? FIRST_STOP.lasts : SECOND_STOP.lasts) }));
+}
