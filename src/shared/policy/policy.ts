@@ -32,10 +32,12 @@ interface CentreRow {
   to: readonly Role[];
   ownLeague?: boolean;
 }
-type Row = { to: 'public' } | { to: 'signed-in' } | { to: 'gateway' } | CentreRow;
+/** `identified`: somebody signed in or a display; `signed-in`: a person. */
+type Row = { to: 'public' } | { to: 'identified' } | { to: 'signed-in' } | { to: 'gateway' } | CentreRow;
 
 export const POLICY = {
   'public': { to: 'public' },
+  'identity.see': { to: 'identified' },
   'account.own': { to: 'signed-in' },
   'events.report': { to: 'gateway' },
   'floor.see': { to: everybody },
@@ -59,6 +61,7 @@ export const POLICY = {
   'figures.see': { to: ['manager'] },
   'settings.see': { to: ['manager', 'mechanic'] },
   'settings.edit': { to: ['manager'] },
+  'people.manage': { to: ['manager'] },
 } as const satisfies Record<string, Row>;
 
 export type Permission = keyof typeof POLICY;
@@ -73,6 +76,7 @@ export function decide(permission: Permission, actor: Actor, resource: Resource)
   if (actor.kind === 'nobody') return 'unauthenticated';
   if (actor.kind === 'job') return 'ok';
   if (row.to === 'gateway') return actor.kind === 'gateway' ? 'ok' : 'forbidden';
+  if (row.to === 'identified') return actor.kind === 'user' || actor.kind === 'display' ? 'ok' : 'forbidden';
   if (row.to === 'signed-in') return actor.kind === 'user' ? 'ok' : 'forbidden';
   return decideInCentre(row, actor, resource);
 }

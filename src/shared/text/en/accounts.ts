@@ -29,6 +29,7 @@ export const refusals: Sentences = {
   'session.too-many-tries': ({ retryAfterS }) => `Too many wrong tries. Try again in ${waitText(Number(retryAfterS ?? 60))}.`,
   'session.unknown': () => 'This sign-in has ended already.',
   'display.unknown': () => 'This display link is unknown or was revoked. The manager can make a new one.',
+  'person.email-taken': () => 'There is an account with this address already.',
   'person.unknown': () => 'Nobody of this centre is meant. The list may have changed: load it again.',
   'person.already-here': () => 'Somebody with this address belongs to the centre already.',
   'person.last-manager': () => 'A centre keeps one manager at least. Make somebody else manager first.',
