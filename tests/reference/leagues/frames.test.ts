@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { deliveriesAGame, deliveriesBounds, DELIVERIES_A_FRAME, framesOnLane, framesOnOneLane } from '#shared/domain/leagues/frames.ts';
+import { deliveriesAGame, deliveriesBounds, framesOnLane, framesOnOneLane } from '#shared/domain/leagues/frames.ts';
+import { DEFAULT_DELIVERIES_PER_FRAME } from '#shared/domain/runs/forecast.ts';
 
 /** Sources: rules of tenpin (USBC playing rules, rule 2 and 106a/b as quoted publicly; bowling.sport rule 1.1); totals computed from them. */
 describe('frame arithmetic', () => {
@@ -16,8 +17,8 @@ describe('frame arithmetic', () => {
   it('a perfect game of 12 lies inside, and so does the expected number', () => {
     const { least, most } = deliveriesAGame();
     expect(12).toBeGreaterThanOrEqual(least);
-    expect(DELIVERIES_A_FRAME * 10).toBeGreaterThan(least);
-    expect(DELIVERIES_A_FRAME * 10).toBeLessThan(most);
+    expect(DEFAULT_DELIVERIES_PER_FRAME.low * 10).toBeGreaterThan(least);
+    expect(DEFAULT_DELIVERIES_PER_FRAME.high * 10).toBeLessThan(most);
   });
 
   it('on two lanes each bowler has five frames of a game on each', () => {

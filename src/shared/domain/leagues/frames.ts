@@ -17,9 +17,6 @@ export function deliveriesAGame(): { least: number; most: number } {
   return { least, most };
 }
 
-/** Deliveries a frame that are expected where only frames are known: between 1.1 and 2.1; league bowlers lie near 1.7 (common practice). */
-export const DELIVERIES_A_FRAME = 1.7;
-
 /** How a session is bowled on one pair. */
 export interface PairFormat {
   /** Names on the score sheets of the pair: both teams. */
