@@ -1,4 +1,5 @@
 import type { Knex } from 'knex';
+import { withoutBeforeCommit } from '../db/before-commit.ts';
 import { isDatabaseAway } from '../db/errors.ts';
 import { unitOfWork } from '../db/unit-of-work.ts';
 import { Refusal } from '../http/refusal.ts';
@@ -32,7 +33,7 @@ export class CentreQueue {
 
   add(work: Work): void {
     this.waiting.push(work);
-    if (!this.busy) void this.work();
+    if (!this.busy) withoutBeforeCommit(() => void this.work());
   }
 
   /** The house as of the last commit of this process, and of any other up to 100 ms ago. */

@@ -1,11 +1,12 @@
 import type { Knex } from 'knex';
 import type { Clock } from '../clock.ts';
+import { addedBeforeCommit } from '../db/before-commit.ts';
 import { isDatabaseAway } from '../db/errors.ts';
 import { Refusal } from '../http/refusal.ts';
 import type { CentreRef } from '../http/route.ts';
 import { CentreQueue } from './centre-queue.ts';
 import { readFacts } from './journal-store.ts';
-import type { EntryResult, Ledger } from './ledger.ts';
+import type { Decision, EntryResult, Ledger } from './ledger.ts';
 import type { Work, WorkOf } from './work.ts';
 
 /** Nobody waits longer for a database that is away. */
@@ -29,6 +30,22 @@ function within<T>(ms: number, start: (answer: (value: T) => void, fail: (error:
   });
 }
 
+type Decide<R> = (...given: Parameters<WorkOf<'decision'>['decide']>) => Promise<Decision<R>> | Decision<R>;
+
+/** What the request adds to its unit of work (that its Idempotency-Key is used up) goes with its own decision, if that changes anything. */
+function withOwnLast<R>(decide: Decide<R>): Decide<R> {
+  const last = addedBeforeCommit();
+  if (last === undefined) return decide;
+  return async (...given) => {
+    const decision = await decide(...given);
+    if (decision.facts.length === 0 && !decision.write) return decision;
+    return { ...decision, write: async (trx, seq) => {
+      await decision.write?.(trx, seq);
+      await last(trx);
+    } };
+  };
+}
+
 /** The ledger upon one database; see `Ledger`. One per process and database: it holds what the process remembers of each centre. */
 export function createLedger({ db, clock }: { db: Knex; clock: Clock }): Ledger {
   const queues = new Map<string, CentreQueue>();
@@ -46,7 +63,7 @@ export function createLedger({ db, clock }: { db: Knex; clock: Clock }): Ledger 
       wait<EntryResult[]>(centre, options?.deadlineMs ?? DEADLINE_MS, (answer, fail) => ({ kind: 'device', now: receivedAt, entries, answer, fail })),
     decide: (centre, decide, options) =>
       wait(centre, options?.deadlineMs ?? DEADLINE_MS, (answer, fail) => ({
-        kind: 'decision', now: options?.now ?? clock.now(), decide, answer: answer as WorkOf<'decision'>['answer'], fail,
+        kind: 'decision', now: options?.now ?? clock.now(), decide: withOwnLast(decide), answer: answer as WorkOf<'decision'>['answer'], fail,
       })),
     mend: (centre, events, by) => wait<number>(centre, DEADLINE_MS, (answer, fail) => ({ kind: 'mended', now: clock.now(), events, by, answer, fail })),
     facts: (centre, from, to) => within(DEADLINE_MS, (answer, fail) => void readFacts(db, centre.id, { from, to }).then(answer, fail)),
