@@ -34,7 +34,7 @@ export function laneWords(finding: LaneFinding): string {
     case 'lanes.high-by-chance':
       return `No lane stands out. ${sentenceCase(laneList(finding.lanes))} ${finding.lanes.length === 1 ? 'is' : 'are'} a little high, but ${about(finding.byChance)} of ${finding.of} would be by chance alone.`;
     case 'lanes.several-high':
-      return `${sentenceCase(laneList(finding.lanes))} ${finding.lanes.length === 1 ? 'is' : 'are'} a little high: more than the ${about(finding.byChance)} of ${finding.of} that chance would bring. None is far out; look again with more frames.`;
+      return `${sentenceCase(laneList(finding.lanes))} ${finding.lanes.length === 1 ? 'is' : 'are'} a little high: chance alone would bring ${about(finding.byChance)} of ${finding.of}. None is far out; look again with more frames.`;
     case 'lanes.alike':
       return `All ${finding.of} lanes lie within what chance allows. No lane is shown to be worse.`;
   }
@@ -56,9 +56,9 @@ export function changeWords(finding: ChangeFinding): string {
     case 'change.no-stops':
       return 'No machine stops on either side of the change, so there is nothing to compare.';
     case 'change.fewer':
-      return `Fewer stops per frame since the change: ${changeRange(finding.low, finding.high)}. That the change caused it isn't shown by this alone.`;
+      return `Fewer stops per frame since the change: ${changeRange(finding.low, finding.high)}. That the change caused it isn’t shown by this alone.`;
     case 'change.more':
-      return `More stops per frame since the change: ${changeRange(finding.low, finding.high)}. That the change caused it isn't shown by this alone.`;
+      return `More stops per frame since the change: ${changeRange(finding.low, finding.high)}. That the change caused it isn’t shown by this alone.`;
     case 'change.not-shown':
       return `Not shown yet: the difference could be chance (${changeRange(finding.low, finding.high)}). ${moreFrames(finding.still)}`;
   }
@@ -90,9 +90,9 @@ export function rateWords(finding: RateFinding): string {
     case 'rate.mixed':
       return 'These frames were counted in different ways, so they have no common rate.';
     case 'rate.none':
-      return `No stop in ${whole.format(finding.frames)} frames: at most ${oneDecimal.format(finding.atMost)} per thousand is what that rules in.`;
+      return `No stop in ${whole.format(finding.frames)} frames: the true rate is probably below ${oneDecimal.format(finding.atMost)} per thousand.`;
     case 'rate.value':
-      return `${oneDecimal.format(finding.rate)} stops per thousand frames (${percent(finding.level)} sure: ${oneDecimal.format(finding.low)} to ${oneDecimal.format(finding.high)}).`;
+      return `${oneDecimal.format(finding.rate)} stops per thousand frames (${percent(finding.level)} interval ${oneDecimal.format(finding.low)} to ${oneDecimal.format(finding.high)}).`;
   }
 }
 
@@ -113,6 +113,9 @@ export function partWords(finding: PartFinding, unit: string): string {
 export function waitWords(finding: WaitFinding): string {
   const mechanics = plural(finding.mechanics, 'mechanic');
   if (finding.code === 'wait.overloaded') return `More calls than ${mechanics} can answer: the wait would grow all evening.`;
+  if (finding.code === 'wait.missed' && percent(finding.share) === percent(finding.wanted)) {
+    return `${mechanics}: just under the ${percent(finding.wanted)} of calls answered within ${plural(finding.minutes, 'minute')} that are wanted.`;
+  }
   const within = `${mechanics}: about ${percent(finding.share)} of calls answered within ${plural(finding.minutes, 'minute')}`;
   return finding.code === 'wait.met' ? `${within}, as wanted.` : `${within}, less than the ${percent(finding.wanted)} wanted.`;
 }
