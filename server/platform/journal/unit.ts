@@ -122,7 +122,7 @@ class Unit {
       const made = decision.facts.map((fact) => decided(this.centre.id, fact, work.now, this.place()));
       await this.put(made.map(({ fact }) => fact));
       const after = { ...this.house(), seq: this.seq };
-      const result = decision.write ? await this.writeOwn(decision, after) : decision.result(after);
+      const result = await this.writeOwn(decision, after);
       this.rows.push(...made.map(({ row }) => row));
       for (const topic of [...(decision.topics ?? []), ...made.map(({ fact }) => topicOf(fact))]) if (topic) this.topics.add(topic);
       if (made.length > 0 || decision.write || decision.topics?.length) this.written = true;
@@ -134,11 +134,9 @@ class Unit {
     }
   }
 
-  private async writeOwn(decision: Decision<unknown>, after: HouseAt): Promise<unknown> {
-    return this.trx.transaction(async (savepoint) => {
-      await decision.write?.(savepoint, this.seq);
-      return decision.result(after);
-    });
+  private async writeOwn({ write, result }: Decision<unknown>, after: HouseAt): Promise<unknown> {
+    if (write) await this.trx.transaction(async (savepoint) => write(savepoint, this.seq));
+    return result(after);
   }
 
   async save(): Promise<Outcome> {
