@@ -2,12 +2,12 @@ import type { Knex } from 'knex';
 import type { House } from '#shared/domain/house/state.ts';
 import type { Days } from '../days.ts';
 import { calls } from './calls.ts';
-import { laneStates, laneUses, quarterCounters } from './lanes.ts';
+import { laneOuts, laneStates, laneUses, quarterCounters } from './lanes.ts';
 import { keyOf, type Projection, remove, type Row, upsert } from './rows.ts';
 import { runLanes, runs } from './runs.ts';
 
 /** Every table that the house is written to. */
-export const PROJECTIONS: readonly Projection[] = [laneStates, laneUses, quarterCounters, calls, runs, runLanes];
+export const PROJECTIONS: readonly Projection[] = [laneStates, laneUses, laneOuts, quarterCounters, calls, runs, runLanes];
 
 /** Rows of one table that a unit of work makes new or other, and rows that are no longer true. */
 export interface TableChanges {

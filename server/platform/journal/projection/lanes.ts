@@ -37,6 +37,19 @@ export const laneUses: Projection = {
   }))),
 };
 
+const outsOf = (lane: LaneState | null): { from: number; to: number | null; reason: string }[] =>
+  lane ? [...lane.outs, ...(lane.outOfService ? [{ from: lane.outOfService.since, to: null, reason: lane.outOfService.reason }] : [])] : [];
+
+export const laneOuts: Projection = {
+  table: 'lane_out',
+  key: ['lane', 'from_at'],
+  columns: ['to_at', 'reason'],
+  rows: (house, other) => changed(house, other).flatMap(([lane, before]) => {
+    if (lane.outs === before?.outs && lane.outOfService === before.outOfService) return [];
+    return outsOf(lane).map((out) => ({ lane: lane.lane, from_at: new Date(out.from), to_at: time(out.to), reason: out.reason }));
+  }),
+};
+
 export const quarterCounters: Projection = {
   table: 'quarter_counter',
   key: ['quarter_at', 'lane', 'kind', 'opened'],

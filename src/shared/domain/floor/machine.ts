@@ -1,6 +1,6 @@
 import type { FactOf } from '../journal/fact.ts';
 import { changeLane } from './lane-change.ts';
-import type { FloorState } from './state.ts';
+import type { FloorState, LaneState } from './state.ts';
 
 const MARKS_KEPT = 12;
 
@@ -32,4 +32,10 @@ export const outOfService = (floor: FloorState, fact: FactOf<'lane.out-of-servic
   }));
 
 export const backInService = (floor: FloorState, fact: FactOf<'lane.back-in-service'>): FloorState =>
-  changeLane(floor, fact.data.lane, fact, () => ({ outOfService: null }));
+  changeLane(floor, fact.data.lane, fact, (lane) => inService(lane, fact.time));
+
+/** The lane is in service from `at`; the time it was out is kept. */
+export function inService(lane: LaneState, at: number): Pick<LaneState, 'outOfService' | 'outs'> {
+  const out = lane.outOfService;
+  return { outOfService: null, outs: out && out.since < at ? [...lane.outs, { from: out.since, to: at, reason: out.reason }] : lane.outs };
+}

@@ -13,6 +13,13 @@ export interface Use {
   by: 'gateway' | 'user' | 'job';
 }
 
+/** A time out of service that has ended. */
+export interface Out {
+  from: number;
+  to: number;
+  reason: string;
+}
+
 /** Counts of one lane, UTC quarter hour and kind; `opened` is the `from` of the use they belong to, 0 when unassigned. */
 export interface QuarterCount {
   quarter: number;
@@ -56,8 +63,9 @@ export interface LaneState {
   /** Source of the last device event, and its time: a silent gateway's lanes are *unheard*. */
   source: string | null;
   lastAt: number;
-  /** Since the last checkpoint, oldest first: ended uses, counts by quarter (the last one grows). */
+  /** Since the last checkpoint, oldest first: ended uses, ended times out of service, counts by quarter (the last one grows). */
   uses: Use[];
+  outs: Out[];
   counts: QuarterCount[];
 }
 
@@ -68,7 +76,7 @@ export function emptyLane(lane: number): LaneState {
   return {
     lane, use: null, progress: null, power: 'unknown', stop: null, bumpers: false, outOfService: null, dressed: null, brokenOff: null,
     deliveriesSince: 0, deliveriesSinceBy: {}, framesEver: 0, stopMarks: [], hears: { deliveries: false, frames: false, stops: false },
-    source: null, lastAt: 0, uses: [], counts: [],
+    source: null, lastAt: 0, uses: [], outs: [], counts: [],
   };
 }
 

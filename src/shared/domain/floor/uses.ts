@@ -34,8 +34,9 @@ export function move(floor: FloorState, fact: FactOf<'lane.moved'>): FloorState 
 export const progress = (floor: FloorState, fact: FactOf<'game.progress'>): FloorState =>
   changeLane(floor, fact.data.lane, fact, () => ({ progress: { game: fact.data.game, frame: fact.data.frame, at: fact.time } }));
 
+/** A use that ends in the moment it began is none. */
 function ended(lane: LaneState, at: number): Pick<LaneState, 'use' | 'uses' | 'progress'> {
-  return { use: null, progress: null, uses: lane.use ? [...lane.uses, { ...lane.use, to: at }] : lane.uses };
+  return { use: null, progress: null, uses: lane.use && lane.use.from < at ? [...lane.uses, { ...lane.use, to: at }] : lane.uses };
 }
 
 type Said = FactOf<'lane.opened'>['data'];

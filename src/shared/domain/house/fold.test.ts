@@ -76,6 +76,7 @@ describe('calls', () => {
     expect([lane(out, 5).outOfService, lane(out, 6).outOfService]).toMatchObject([{ reason: 'belt' }, { reason: 'belt' }]);
     const back = foldHouse(out, fact(30, 'call.back-in-service', { call: only(out).id, cause: 'belt' }, ines));
     expect([lane(back, 5).outOfService, lane(back, 6).outOfService]).toEqual([null, null]);
+    expect(lane(back, 6).outs).toEqual([{ from: 20, to: 30, reason: 'belt' }]);
     expect(back.calls.closed[0]).toMatchObject({ outOfService: { at: 20, backAt: 30 }, cleared: { cause: 'belt' } });
   });
   it('alarms when a machine counts while somebody is recorded in it', () => {

@@ -3,6 +3,7 @@ import type { Call, CallsState } from '../calls/state.ts';
 import { openCall } from '../calls/work.ts';
 import { foldFloor } from '../floor/fold.ts';
 import { changeLane } from '../floor/lane-change.ts';
+import { inService } from '../floor/machine.ts';
 import type { FloorState } from '../floor/state.ts';
 import type { Fact } from '../journal/fact.ts';
 import { foldRuns, runKey } from '../runs/fold.ts';
@@ -23,7 +24,7 @@ export function foldHouse(house: House, fact: Fact): House {
 /** What a state needn't carry past a business-day cut: what has ended is in the tables. */
 export function checkpointHouse(house: House): House {
   return {
-    floor: house.floor.map((lane) => (lane.uses.length + lane.counts.length === 0 ? lane : { ...lane, uses: [], counts: [] })),
+    floor: house.floor.map((lane) => (lane.uses.length + lane.outs.length + lane.counts.length === 0 ? lane : { ...lane, uses: [], outs: [], counts: [] })),
     calls: { ...house.calls, closed: [] },
     runs: { ...house.runs, ended: [] },
   };
@@ -42,7 +43,7 @@ function fromCalls(floor: FloorState, fact: Fact, before: CallsState, after: Cal
   const stillOut = (lane: number) => Object.values(after.open).some((c) => c.status === 'out-of-service' && c.lanesHeld.includes(lane));
   return eachLane(floor, call, fact, (lane) => ({
     stop: call.equipment === 'pinsetter' && lane.lane === call.lane && !call.safety ? null : lane.stop,
-    outOfService: call.outOfService && !stillOut(lane.lane) ? null : lane.outOfService,
+    ...(call.outOfService && !stillOut(lane.lane) ? inService(lane, fact.time) : {}),
   }));
 }
 
