@@ -60,8 +60,8 @@ describe('calls', () => {
     expect(lane(house, 2).stop).not.toBeNull();
   });
   it('keeps the id of the raise that arrived first, and its earliest time', () => {
-    const late = { ...fact(10, 'pinsetter.stopped', { lane: 4 }), seq: 900 } as Fact;
-    const first = { ...fact(30, 'pinsetter.stopped', { lane: 4 }), seq: 800 } as Fact;
+    const late = { ...fact(10, 'pinsetter.stopped', { lane: 4 }), seq: 900 };
+    const first = { ...fact(30, 'pinsetter.stopped', { lane: 4 }), seq: 800 };
     const alone = only(fold(first));
     const both = only(fold(late, first));
     expect(both.id).toBe(alone.id);
