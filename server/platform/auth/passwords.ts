@@ -35,7 +35,7 @@ export function randomPassword(): string {
 
 /** Beginnings of the long passwords that every list of leaked ones has (from memory of such lists), letters and digits only. */
 const COMMON = ['password', 'passw0rd', 'qwerty', 'qwertz', 'azerty', '123456', '111111', '000000', 'abc123', 'iloveyou', 'letmein', 'welcome', 'admin', 'monkey', 'dragon', 'football', 'baseball', 'sunshine', 'princess', 'trustno1', 'changeme', 'superman', 'bowling', 'lanewright'];
-/** A common word is forgiven when at least this much is left beside it. */
+/** Such words are forgiven when at least this much is left beside them. */
 const REST_MIN = 8;
 const DIFFERENT_MIN = 5;
 
@@ -44,10 +44,14 @@ export function weaknessOf(password: string, about: readonly string[]): 'passwor
   if ([...password].length < PASSWORD_MIN) return 'password.too-short';
   const plain = password.toLowerCase().replace(/[^\p{L}\p{N}]/gu, '');
   if (new Set(plain).size < DIFFERENT_MIN || isRun(plain)) return 'password.too-common';
-  const left = (word: string) => plain.replaceAll(word, '').length;
-  if (COMMON.some((word) => plain.includes(word) && left(word) < REST_MIN)) return 'password.too-common';
+  if (isMadeOf(plain, COMMON)) return 'password.too-common';
   const words = about.flatMap((text) => text.toLowerCase().split(/[^\p{L}\p{N}]+/u)).filter((word) => word.length >= 4);
-  return words.some((word) => plain.includes(word) && left(word) < REST_MIN) ? 'password.about-you' : null;
+  return isMadeOf(plain, words) ? 'password.about-you' : null;
+}
+
+function isMadeOf(plain: string, words: readonly string[]): boolean {
+  const rest = words.reduce((left, word) => left.replaceAll(word, ''), plain);
+  return rest !== plain && rest.length < REST_MIN;
 }
 
 /** 123456789012, abcdefghijkl: every character follows the one before. */

@@ -1,6 +1,6 @@
 import type { Knex } from 'knex';
 import type { Clock } from '../clock.ts';
-import { toRowTime } from '../db/row-times.ts';
+import { fromRowTime, toRowTime } from '../db/row-times.ts';
 import { isDuplicate } from '../db/errors.ts';
 
 export interface Repeatable {
@@ -9,7 +9,7 @@ export interface Repeatable {
   hash: Buffer;
 }
 
-/** What is known of a key: nothing yet (ours to do), somebody is at it, done without an answer kept, or the answer. */
+/** What is known of a key: nothing yet (ours to do), somebody is at it, done but its answer lost, or the answer. */
 export type Claim =
   | { state: 'ours' }
   | { state: 'pending' }
@@ -58,7 +58,9 @@ export function idempotencyStore(db: Knex, clock: Clock) {
     // Let go meanwhile by the request that held it.
     if (row === undefined) return claim(what);
     if (!row.request_hash.equals(what.hash)) return { state: 'mismatch' };
-    return row.state === 'answered' ? { state: 'answered', status: row.status ?? 200, answer: row.answer } : { state: row.state };
+    if (row.state === 'answered') return row.status === null ? { state: 'applied' } : { state: 'answered', status: row.status, answer: row.answer };
+    // Between the commit and its answer a request is still under way, unless its process died there.
+    return { state: row.state === 'applied' && clock.now() - fromRowTime(row.created_at) > ABANDONED_MS ? 'applied' : 'pending' };
   }
 
   return {
@@ -71,9 +73,10 @@ export function idempotencyStore(db: Knex, clock: Clock) {
     answered: async (what: Repeatable, status: number, answer: string | null): Promise<void> => {
       await rows(db).where(own(what)).update({ state: 'answered', status, answer });
     },
-    /** Nothing happened: the same key may be used again. */
-    letGo: async (what: Repeatable): Promise<void> => {
+    /** It broke. Where nothing was committed the same key may be used again; else what is known is that it was done. */
+    broke: async (what: Repeatable): Promise<void> => {
       await rows(db).where({ ...own(what), state: 'pending' }).delete();
+      await rows(db).where({ ...own(what), state: 'applied' }).update({ state: 'answered' });
     },
   };
 }

@@ -48,7 +48,7 @@ async function attempt(store: IdempotencyStore, what: Repeatable, requestId: str
   } catch (error) {
     const refusal = refusalOf(error);
     if (refusal === null || refusal.status >= 500 || refusal.status === 429) {
-      await store.letGo(what).catch(() => undefined);
+      await store.broke(what).catch(() => undefined);
       throw error;
     }
     return { status: refusal.status, json: JSON.stringify(problemOf(refusal, requestId)) };
