@@ -49,7 +49,7 @@ export function callsScreen(ledger: Ledger, ended: CallsReadModel, familyOfLane:
       const order = callOrder(null);
       const open = Object.values(house.calls.open).toSorted((a, b) => order(callFacts(a, house, now), callFacts(b, house, now)));
       const closed = await ended.endedBetween(centre, day.from, day.to);
-      return { open: open.map((call) => callView(call, house, now)), closed: closed.map((call) => closedCall(call, house, now)) };
+      return { open: open.map((call) => callView(call, house, now)), closed: closed.map((call) => closedCall(call, house, now)), lanes: centre.lanes };
     },
 
     /** Which causes fit a call; null while nothing is known of it: then the command refuses it anyway. */

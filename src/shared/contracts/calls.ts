@@ -38,7 +38,7 @@ const answer = { ...work, permission: 'call.answer' as const };
 export const callContracts = {
   list: contract({
     id: 'calls.list', method: 'GET', path: at, permission: 'call.see', summary: 'Open calls, and those closed this business day', params: centreParams,
-    response: z.object({ open: z.array(callView), closed: z.array(closedCall) }),
+    response: z.object({ open: z.array(callView), closed: z.array(closedCall), /** Lanes of the house: where a call can be raised. */ lanes: z.int() }),
   }),
   see: contract({ id: 'calls.see', method: 'GET', path: `${at}/:call`, permission: 'call.see', summary: 'One call with its steps and the history of its lane', params: callParams, response: callDetail, refusals: ['call.unknown'] }),
   raise: contract({

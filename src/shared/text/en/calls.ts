@@ -2,6 +2,7 @@ import type { CallStatus, CallStepKind } from '../../domain/calls/state.ts';
 import type { LockoutStep } from '../../domain/calls/lockout-steps.ts';
 import { type Equipment, type LaneUseKind, neighbourOf, pairOf, type SafetyKind, type Scope } from '../../domain/equipment.ts';
 import { causeText } from './calls-causes.ts';
+import type { Sentences } from './sentences.ts';
 
 export const equipmentNames: Record<Equipment, string> = {
   'pinsetter': 'pinsetter', 'ball-return': 'ball return', 'ball-lift': 'ball lift', 'foul-unit': 'foul unit', 'scoring': 'scoring', 'console': 'console',
@@ -99,9 +100,8 @@ export const unansweredMail = {
     ].join('\n\n'),
 } as const;
 
-type Params = Record<string, string | number>;
 /** Sentences for this slice's refusal codes. */
-export const refusals: Record<string, (params: Params) => string> = {
+export const refusals: Sentences = {
   'call.unknown': () => 'There is no such call here.',
   'call.already-cleared': () => 'This call is closed already.',
   'call.already-acknowledged': ({ by }) => `${by} has this call already.`,
