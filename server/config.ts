@@ -38,7 +38,7 @@ const environment = z.object({
   PUBLIC_URL: url('http', 'https').optional(),
   LANEWRIGHT_DEMO: z.enum(['on', 'off'], 'must be on or off').default('on'),
   LANEWRIGHT_DEV: z.enum(['0', '1'], 'must be 0 or 1').default('0'),
-  NODE_ENV: z.string().default('development'),
+  NODE_ENV: z.enum(['production', 'development', 'test'], 'must be production, development or test').default('development'),
   LOG_LEVEL: z.enum(LOG_LEVELS, `must be one of ${LOG_LEVELS.join(', ')}`).default('info'),
 });
 

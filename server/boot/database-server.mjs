@@ -81,8 +81,9 @@ function greets(port) {
 /**
  * Starts the server of this folder, or finds it running. The caller holds the
  * folder's lock. `port` is taken as said (0: the last one, else any free one).
+ * `small` takes less memory; `fast` doesn't wait for the disk.
  */
-export async function startDatabase(base, { port = 0, small = false, say = () => {} } = {}) {
+export async function startDatabase(base, { port = 0, small = false, fast = false, say = () => {} } = {}) {
   const files = filesOf(path.resolve(base));
   const running = runningDatabase(base);
   if (running) {
@@ -97,7 +98,7 @@ export async function startDatabase(base, { port = 0, small = false, say = () =>
   const account = accountFor(files.base, say);
   makeDataFolder(files, account, say);
   writeInit(files, state.password, account);
-  const child = spawn(program('mariadbd', 'mysqld'), serverArguments(files, state.port, account, small), { cwd: '/', detached: true, stdio: 'ignore' });
+  const child = spawn(program('mariadbd', 'mysqld'), serverArguments(files, state.port, account, { small, fast }), { cwd: '/', detached: true, stdio: 'ignore' });
   child.once('error', () => {});
   child.unref();
   fs.writeFileSync(files.pid, String(child.pid));
@@ -172,7 +173,7 @@ GRANT ALL ON \`${NAME}\\_%\`.* TO '${NAME}'@'${host}';`,
   if (account && account !== 'root') execFileSync('chown', ['-R', account, files.data, files.init, files.log]);
 }
 
-function serverArguments(files, port, account, small) {
+function serverArguments(files, port, account, { small, fast }) {
   return [
     '--no-defaults',
     `--datadir=${files.data}`,
@@ -194,5 +195,7 @@ function serverArguments(files, port, account, small) {
     `--secure-file-priv=${files.data}`,
     '--max-allowed-packet=64M',
     '--max-connections=300',
+    // for tests: a commit is written before it is answered as ever, and survives a killed process, but nothing waits for the disk
+    ...(fast ? ['--innodb-flush-method=nosync', '--debug-no-sync'] : []),
   ];
 }

@@ -11,5 +11,5 @@ export type DatabaseInUse = {
 
 export function useDatabase(
   base: string,
-  options?: { port?: number; small?: boolean; say?: (text: string) => void },
+  options?: { port?: number; small?: boolean; fast?: boolean; say?: (text: string) => void },
 ): Promise<DatabaseInUse>;

@@ -30,10 +30,10 @@ function livingUsers(base) {
  * fails; 0: any. Returns where it is, and `release()`, after which the server
  * stops if nobody else uses it.
  */
-export async function useDatabase(base, { port = 0, small = false, say = () => {} } = {}) {
+export async function useDatabase(base, { port = 0, small = false, fast = false, say = () => {} } = {}) {
   const folder = path.resolve(base);
   const mine = path.join(usersOf(folder), String(process.pid));
-  const options = { port, small, say };
+  const options = { port, small, fast, say };
   const found = await withLock(lockOf(folder), async () => {
     await leaveOtherPort(folder, port);
     const database = await startDatabase(folder, options);

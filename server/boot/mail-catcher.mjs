@@ -5,11 +5,12 @@ import { keepRunning } from './child.mjs';
 import { freePort, isPortFree } from './processes.mjs';
 import { StopError } from './steps.mjs';
 
-/** Starts the catcher; resolves, once it listens, to `{child, smtpUrl, pageUrl}`. */
+/** Starts the catcher; `listening` resolves once it does, while the server, told `smtpUrl`, may start already. */
 export async function startMailCatcher({ dataDir, env, output }) {
   const { smtp, page } = await portsFor(path.join(dataDir, 'mail-ports.json'));
-  return new Promise((resolve, reject) => {
-    const child = keepRunning({
+  let child;
+  const listening = new Promise((resolve, reject) => {
+    child = keepRunning({
       name: 'The mail catcher',
       file: 'server/fakes/mail/main.ts',
       args: [`--smtp-port=${smtp}`, `--page-port=${page}`],
@@ -18,11 +19,13 @@ export async function startMailCatcher({ dataDir, env, output }) {
       onMessage: (message) => {
         if (message?.type !== 'ready') return;
         child.settle();
-        resolve({ child, smtpUrl: `smtp://127.0.0.1:${smtp}`, pageUrl: `http://localhost:${page}` });
+        resolve();
       },
       onFirstExit: (how) => reject(new StopError(`The mail catcher didn't start (${how}).`)),
     });
   });
+  listening.catch(() => {}); // told to whoever waits for it
+  return { child, listening, smtpUrl: `smtp://127.0.0.1:${smtp}`, pageUrl: `http://localhost:${page}` };
 }
 
 async function portsFor(file) {

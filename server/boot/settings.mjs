@@ -67,11 +67,18 @@ export function readSettings(env) {
 /** Makes the data folder, or stops with its name. */
 export function makeDataDir(settings) {
   try {
-    fs.mkdirSync(settings.dataDir, { recursive: true });
+    makeFolder(settings.dataDir);
     fs.accessSync(settings.dataDir, fs.constants.W_OK);
   } catch (error) {
     throw new StopError(`DATA_DIR=${settings.dataDir}: it can't be written to (${error.code}).`);
   }
+}
+
+/** Node's own recursive mkdir never returns below a folder like /proc, which answers ENOENT. */
+function makeFolder(folder) {
+  if (fs.existsSync(folder)) return;
+  makeFolder(path.dirname(folder));
+  fs.mkdirSync(folder);
 }
 
 /** Stops with the name of a port that somebody else has. */

@@ -37,8 +37,12 @@ async function start() {
     LANEWRIGHT_DEMO: settings.demo ? 'on' : 'off',
     LANEWRIGHT_DEV: dev ? '1' : '0',
   };
-  if (settings.demo && settings.smtpUrl === null) env.SMTP_URL = await catchMail(settings, env, log);
-  await startServer(env, log);
+  const mail = settings.demo && settings.smtpUrl === null ? await catchMail(settings, env, log) : null;
+  await startServer(mail ? { ...env, SMTP_URL: mail.smtpUrl } : env, log);
+  if (mail) {
+    await Promise.race([mail.listening, stopAsked]);
+    say(`Mail that it sends is caught at ${mail.pageUrl}`);
+  }
   if (settings.demo) await startGateway(env, log);
   const address = settings.publicUrl ?? `http://localhost:${settings.port}`;
   say(`Lanewright is at ${address} (ready in ${process.uptime().toFixed(1)} s)`);
@@ -83,8 +87,7 @@ function checkAnswers(databaseUrl) {
 async function catchMail(settings, env, log) {
   const mail = await startMailCatcher({ dataDir: settings.dataDir, env, output: log.fd });
   await keep(mail.child.stop);
-  say(`Mail that it sends is caught at ${mail.pageUrl}`);
-  return mail.smtpUrl;
+  return mail;
 }
 
 async function startServer(env, log) {

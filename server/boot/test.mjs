@@ -21,7 +21,7 @@ async function main() {
   await ensurePrograms({ browser: true });
   await ensureModules();
   await ensureClient();
-  const database = await useDatabase(path.join(settings.dataDir, 'test'), { small: true, say });
+  const database = await useDatabase(path.join(settings.dataDir, 'test'), { small: true, fast: !bench, say });
   try {
     const ownEnv = { ...env, DATA_DIR: settings.dataDir };
     return bench ? await runBench(args, { ...ownEnv, DATABASE_URL: database.url }) : await runTests(args, ownEnv);

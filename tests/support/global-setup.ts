@@ -23,7 +23,7 @@ let projects = 0;
 /** Starts the tests' own MariaDB unless it runs already, and stops it when nobody else uses it. */
 export async function setup(project: TestProject): Promise<() => Promise<void>> {
   projects += 1;
-  inUse ??= await useDatabase(BASE, { small: true });
+  inUse ??= await useDatabase(BASE, { small: true, fast: true });
   await dropRuns(inUse.url, (pid) => pid !== process.pid && !isAlive(pid));
   project.provide('databaseUrl', inUse.url);
   project.provide('runId', String(process.pid));
