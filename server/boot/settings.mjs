@@ -1,10 +1,12 @@
 // The settings as the boot needs them, checked before anything is installed. `server/config.ts` reads them for the program.
 import fs from 'node:fs';
+import net from 'node:net';
 import path from 'node:path';
 import { isPortFree } from './processes.mjs';
 import { runningDatabase } from './database-server.mjs';
 import { root, StopError } from './steps.mjs';
 
+const DATABASE_ANSWERS_WITHIN_MS = 3_000;
 const LOG_LEVELS = ['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent'];
 
 const port = (fallback) => (text) => {
@@ -81,14 +83,32 @@ function makeFolder(folder) {
   fs.mkdirSync(folder);
 }
 
-/** Stops with the name of a port that somebody else has. */
-export async function checkPorts(settings) {
+/** Stops with the name of a port that somebody else has, or of a database elsewhere that doesn't answer. */
+export async function checkReach(settings) {
   if (!(await isPortFree(settings.port, ['0.0.0.0', '::']))) throw new StopError(`PORT=${settings.port}: it is taken by another program.`);
-  if (settings.databaseUrl !== null) return;
-  await checkDatabasePort(settings);
+  if (settings.databaseUrl === null) await checkDatabasePort(settings);
+  else await checkAnswers(settings.databaseUrl);
 }
 
 export async function checkDatabasePort(settings) {
   if (runningDatabase(settings.dataDir)?.port === settings.dbPort) return;
   if (!(await isPortFree(settings.dbPort))) throw new StopError(`DB_PORT=${settings.dbPort}: it is taken by another program.`);
+}
+
+function checkAnswers(databaseUrl) {
+  const { hostname, port } = new URL(databaseUrl);
+  const place = `${hostname}:${port || 3306}`;
+  return new Promise((resolve, reject) => {
+    const socket = net.connect({ host: hostname, port: Number(port || 3306), timeout: DATABASE_ANSWERS_WITHIN_MS });
+    const fail = () => {
+      socket.destroy();
+      reject(new StopError(`DATABASE_URL: nothing answers at ${place}.`));
+    };
+    socket.once('timeout', fail);
+    socket.once('error', fail);
+    socket.once('connect', () => {
+      socket.destroy();
+      resolve();
+    });
+  });
 }

@@ -1,6 +1,5 @@
 // `npm start` and `npm run dev`: sets up what is missing, then owns database, server and fakes until it is told to stop.
 // Plain Node: runs before anything is installed.
-import net from 'node:net';
 import path from 'node:path';
 import { keepRunning } from './child.mjs';
 import { ensureClient } from './client.mjs';
@@ -9,13 +8,12 @@ import { tryLock, unlock } from './lock.mjs';
 import { endOfLog, openLog } from './log-file.mjs';
 import { startMailCatcher } from './mail-catcher.mjs';
 import { checkNode, ensureModules, ensurePrograms } from './packages.mjs';
-import { checkPorts, makeDataDir, readSettings } from './settings.mjs';
+import { checkReach, makeDataDir, readSettings } from './settings.mjs';
 import { runEntry, say, StopError } from './steps.mjs';
 import { askToStop, isStopAsked, keep, stopAsked, unwind } from './unwind.mjs';
 import { watchSources } from './watch.mjs';
 
 const STILL_WAITING_MS = 10_000;
-const DATABASE_ANSWERS_WITHIN_MS = 3_000;
 
 const dev = process.argv.includes('--dev');
 async function start() {
@@ -23,7 +21,7 @@ async function start() {
   checkNode();
   makeDataDir(settings);
   await claim(settings);
-  await checkPorts(settings);
+  await checkReach(settings);
   await ensurePrograms({ database: settings.databaseUrl === null });
   await ensureModules();
   if (!dev) await ensureClient();
@@ -57,31 +55,10 @@ async function claim(settings) {
 }
 
 async function ensureDatabase(settings) {
-  if (settings.databaseUrl !== null) {
-    await checkAnswers(settings.databaseUrl);
-    return settings.databaseUrl;
-  }
+  if (settings.databaseUrl !== null) return settings.databaseUrl;
   const database = await useDatabase(settings.dataDir, { port: settings.dbPort, say });
   await keep(database.release);
   return database.url;
-}
-
-function checkAnswers(databaseUrl) {
-  const { hostname, port } = new URL(databaseUrl);
-  const place = `${hostname}:${port || 3306}`;
-  return new Promise((resolve, reject) => {
-    const socket = net.connect({ host: hostname, port: Number(port || 3306), timeout: DATABASE_ANSWERS_WITHIN_MS });
-    const fail = () => {
-      socket.destroy();
-      reject(new StopError(`DATABASE_URL: nothing answers at ${place}.`));
-    };
-    socket.once('timeout', fail);
-    socket.once('error', fail);
-    socket.once('connect', () => {
-      socket.destroy();
-      resolve();
-    });
-  });
 }
 
 async function catchMail(settings, env, log) {
