@@ -21,7 +21,7 @@ function within<T>(ms: number, start: (answer: (value: T) => void, fail: (error:
     const timer = setTimeout(() => reject(away()), ms);
     const fail = (error: unknown) => {
       clearTimeout(timer);
-      reject(asRefusal(error) as Error);
+      reject(asRefusal(error));
     };
     start((value) => {
       clearTimeout(timer);

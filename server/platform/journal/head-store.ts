@@ -5,7 +5,7 @@ import type { Topic } from '#shared/realtime/events.ts';
 import { fromBinary, newId, toBinary } from '../db/uuid.ts';
 import { notFound } from '../http/refusal.ts';
 import type { CentreRef } from '../http/route.ts';
-import type { CentreHeadRow, CheckpointRow, OutboxRow } from './tables.ts';
+import type { CentreHeadRow } from './tables.ts';
 
 /** Where a centre's journal stands. */
 export interface Head {
@@ -56,7 +56,7 @@ export interface Checkpoint {
 export async function readCheckpoints(db: Knex, centre: Buffer, from: number, to: number, newest = false): Promise<Checkpoint[]> {
   const query = db('stream_checkpoint').select('at', 'state').where({ centre_id: centre, fold_version: HOUSE_FOLD_VERSION });
   void query.where('at', '>=', from).where('at', '<', Number.isFinite(to) ? to : Number.MAX_SAFE_INTEGER);
-  const rows = (await (newest ? query.orderBy('at', 'desc').limit(1) : query.orderBy('at'))) as Pick<CheckpointRow, 'at' | 'state'>[];
+  const rows = (await (newest ? query.orderBy('at', 'desc').limit(1) : query.orderBy('at')));
   return rows.map((row) => ({ at: row.at, state: JSON.parse(row.state) as House }));
 }
 
@@ -84,6 +84,6 @@ export async function saveOutbox(trx: Knex.Transaction, centre: Buffer, seq: num
 
 /** Outbox rows of a centre after a sequence number, in order. */
 export async function readOutbox(db: Knex, centre: Buffer, after: number): Promise<(Touched & { seq: number })[]> {
-  const rows = (await db('outbox').where({ centre_id: centre }).where('seq', '>', after).orderBy('seq').limit(2000)) as OutboxRow[];
+  const rows = (await db('outbox').where({ centre_id: centre }).where('seq', '>', after).orderBy('seq').limit(2000));
   return rows.map((row) => ({ seq: row.seq, lanes: row.lanes, topics: row.topics as Topic[] }));
 }

@@ -15,9 +15,8 @@ import { changesBetween, PROJECTIONS, writeChanges } from './projection/changes.
 const PIECE_MS = 14 * 24 * 3_600_000;
 
 async function* wholeJournal(db: Knex, centre: CentreRef): AsyncGenerator<Fact[]> {
-  const [span] = (await db('journal').where({ centre_id: centre.id, status: 'applied' }).min({ from: 'time_at' }).max({ to: 'time_at' })) as {
-    from: Date | null; to: Date | null;
-  }[];
+  const ends = await db('journal').where({ centre_id: centre.id, status: 'applied' }).min<Date | null>({ from: 'time_at' }).max({ to: 'time_at' });
+  const [span] = ends as unknown as { from: Date | null; to: Date | null }[];
   if (!span?.from || !span.to) return;
   for (let from = span.from.getTime(); from <= span.to.getTime(); from += PIECE_MS) yield await readFacts(db, centre.id, { from, to: from + PIECE_MS });
 }

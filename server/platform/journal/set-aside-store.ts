@@ -10,7 +10,7 @@ export type SetAsideRow = Pick<JournalRow, 'source' | 'id' | 'type' | 'time_at' 
 /** Events that were set aside and still are, newest first. */
 export async function readSetAside(db: Knex, centre: Buffer, limit: number): Promise<SetAsideRow[]> {
   return (await db('journal').select('source', 'id', 'type', 'time_at', 'received_at', 'reason', 'by_name', 'sent')
-    .where({ centre_id: centre, status: 'set-aside' }).orderBy('received_at', 'desc').orderBy('seq', 'desc').orderBy('n', 'desc').limit(limit)) as SetAsideRow[];
+    .where({ centre_id: centre, status: 'set-aside' }).orderBy('received_at', 'desc').orderBy('seq', 'desc').orderBy('n', 'desc').limit(limit));
 }
 
 /** One of them; null when there is none or it has been applied. */

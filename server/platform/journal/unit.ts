@@ -135,8 +135,9 @@ class Unit {
   }
 
   private async writeOwn({ write, result }: Decision<unknown>, after: HouseAt): Promise<unknown> {
+    const answer = result(after);
     if (write) await this.trx.transaction(async (savepoint) => write(savepoint, this.seq));
-    return result(after);
+    return answer;
   }
 
   async save(): Promise<Outcome> {
