@@ -1,6 +1,6 @@
 import { probabilityOfOutside } from './chance.ts';
 import type { Dispersion } from './dispersion.ts';
-import { FUNNEL_INNER, type Funnel } from './funnel.ts';
+import type { Funnel } from './funnel.ts';
 import { isMissing, type Missing } from './missing.ts';
 import type { RateComparison } from './two-rates.ts';
 
@@ -33,11 +33,11 @@ export function laneFinding(result: Funnel | Missing<'no-frames' | 'no-events'>,
   const high = result.lanes.filter((one) => one.position === 'above-inner').map((one) => one.lane);
   const uneven = !isMissing(spread) && spread.p < STRICT && far.length * 8 > of;
   if (uneven) return { code: 'lanes.uneven', lanes: far, of };
-  if (far.length > 0) return { code: 'lanes.watch', lanes: far, byChance: result.byChance.outer / 2, of };
+  if (far.length > 0) return { code: 'lanes.watch', lanes: far, byChance: result.byChance.outer.above, of };
   if (high.length === 0) return { code: 'lanes.alike', of };
-  const oneSide = (1 - FUNNEL_INNER) / 2;
-  const likely = probabilityOfOutside(of, oneSide, high.length) >= SIGNIFICANCE;
-  return { code: likely ? 'lanes.high-by-chance' : 'lanes.several-high', lanes: high, byChance: of * oneSide, of };
+  const byChance = result.byChance.inner.above;
+  const likely = probabilityOfOutside(of, byChance / of, high.length) >= SIGNIFICANCE;
+  return { code: likely ? 'lanes.high-by-chance' : 'lanes.several-high', lanes: high, byChance, of };
 }
 
 export type ChangeFinding =

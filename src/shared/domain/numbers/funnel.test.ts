@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { poissonCdf } from './distributions.ts';
 import { funnel, funnelCount, unclippedFunnelCount, type Funnel } from './funnel.ts';
 
 const house = (counts: number[], frames = 1000): { lane: number; count: number; frames: number }[] =>
@@ -32,8 +33,16 @@ describe('funnel', () => {
     const result = funnel([...house([4, 5]), { lane: 9, count: 0, frames: 0 }]) as Funnel;
     expect(result.lanes.map((one) => one.lane)).toEqual([1, 2]);
     expect(result.withoutFrames).toEqual([9]);
-    expect(result.byChance.inner).toBeCloseTo(0.1, 12);
-    expect(result.byChance.anyOuter).toBeCloseTo(1 - 0.998 ** 2, 12);
+  });
+
+  it('says how many would stand out by chance, from exact tails', () => {
+    // 5 expected each: beyond 9.38 means 10 or more, below 0.54 means none.
+    const { inner } = (funnel(house([4, 5, 6])) as Funnel).byChance;
+    const [up, down] = [1 - poissonCdf(9, 5), Math.exp(-5)];
+    expect(inner.above).toBeCloseTo(3 * up, 10);
+    expect(inner.below).toBeCloseTo(3 * down, 10);
+    expect(inner.any).toBeCloseTo(1 - (1 - up - down) ** 3, 10);
+    expect((funnel(house([4, 5, 6]), 1.5) as Funnel).byChance.outer.above).toBeCloseTo(0.003, 12);
   });
 
   it('widens by the factor of over-dispersion', () => {

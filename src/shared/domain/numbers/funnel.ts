@@ -1,4 +1,3 @@
-import { expectedOutside, probabilityOfOutside } from './chance.ts';
 import { demandAmount, demandCount, demandOpenUnit, demandPositive } from './demand.ts';
 import { poissonCdf, poissonPmf, poissonQuantile } from './distributions.ts';
 import { missing, type Missing } from './missing.ts';
@@ -43,9 +42,14 @@ export type Funnel = {
   /** Lanes with frames, in the order given; lanes without frames are named apart. */
   lanes: FunnelLane[];
   withoutFrames: number[];
-  /** By chance alone: lanes expected outside (either side), and the probability of at least one. */
-  byChance: { inner: number; outer: number; anyInner: number; anyOuter: number };
+  byChance: { inner: ByChance; outer: ByChance };
 };
+
+/**
+ * Were all lanes alike: lanes expected above the limits, below them, and the probability of at least one on either side.
+ * From each lane's own exact tails: interpolated limits of small counts let a little more out above than their name says.
+ */
+export type ByChance = { above: number; below: number; any: number };
 
 /** Probability inside the inner and the outer limits. */
 export const FUNNEL_INNER = 0.95;
@@ -70,18 +74,30 @@ export function funnel(lanes: readonly { lane: number; count: number; frames: nu
   if (events === 0) return missing('no-events');
   const target = (1000 * events) / frames;
   const counted = lanes.filter((one) => one.frames > 0).map((one) => place(one, target, widen));
-  const n = counted.length;
   return {
     target,
     lanes: counted,
     withoutFrames: lanes.filter((one) => one.frames === 0).map((one) => one.lane),
     byChance: {
-      inner: expectedOutside(n, 1 - FUNNEL_INNER),
-      outer: expectedOutside(n, 1 - FUNNEL_OUTER),
-      anyInner: probabilityOfOutside(n, 1 - FUNNEL_INNER),
-      anyOuter: probabilityOfOutside(n, 1 - FUNNEL_OUTER),
+      inner: byChance(counted, (one) => one.inner, FUNNEL_INNER, widen),
+      outer: byChance(counted, (one) => one.outer, FUNNEL_OUTER, widen),
     },
   };
+}
+
+function byChance(lanes: readonly FunnelLane[], band: (one: FunnelLane) => FunnelLimits, inside: number, widen: number): ByChance {
+  let [above, below, none] = [0, 0, 1];
+  for (const one of lanes) {
+    // Widened limits fit counts that aren't Poisson: there only the nominal share is known.
+    const nominal = (1 - inside) / 2;
+    const { low, high } = band(one);
+    const up = widen > 1 ? nominal : 1 - poissonCdf(Math.floor((high * one.frames) / 1000), one.expected);
+    const down = widen > 1 ? nominal : poissonCdf(Math.ceil((low * one.frames) / 1000) - 1, one.expected);
+    above += up;
+    below += down;
+    none *= 1 - up - down;
+  }
+  return { above, below, any: 1 - none };
 }
 
 function place(one: { lane: number; count: number; frames: number }, target: number, widen: number): FunnelLane {

@@ -55,7 +55,7 @@ describe('compareRates', () => {
         expect(wide.low).toBeLessThan(narrow.low);
         expect(wide.high).toBeGreaterThan(narrow.high as number);
         const scaled = compare(a, b * 10, c, d * 10, 0.95);
-        expect(Math.abs((scaled.low as number) / wide.low - 1)).toBeLessThan(1e-9);
+        expect(Math.abs((scaled.low) / wide.low - 1)).toBeLessThan(1e-9);
         expect(narrow.low).toBeLessThan(narrow.ratio as number);
         expect(narrow.high).toBeGreaterThan(narrow.ratio as number);
       }),
