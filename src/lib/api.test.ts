@@ -1,6 +1,7 @@
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { floorContracts } from '#shared/contracts/floor.ts';
-import { addressOf, call, newKey, Problem } from './api.ts';
+import type { Problem } from './api.ts';
+import { addressOf, call, newKey } from './api.ts';
 
 const answer = (status: number, body: unknown, headers: Record<string, string> = {}) =>
   new Response(body === null ? null : JSON.stringify(body), { status, headers: { 'content-type': 'application/json', ...headers } });

@@ -1,5 +1,3 @@
-import type { Role } from '../../policy/policy.ts';
-
 /** Words of the frame around every page. */
 export const wording = {
   product: 'Lanewright',
@@ -30,11 +28,11 @@ export const wording = {
   navShort: {
     floor: 'Floor', calls: 'Calls', runs: 'Runs', patterns: 'Patterns', readiness: 'Ready', leagues: 'Leagues', numbers: 'Numbers', settings: 'Settings',
   },
-  roles: { manager: 'Manager', desk: 'Desk', mechanic: 'Mechanic', secretary: 'League secretary', display: 'Display' } satisfies Record<Role, string>,
 } as const;
 
 export const appText = {
   openCalls: (count: number) => `${count} open ${count === 1 ? 'call' : 'calls'}`,
+  shownAsOf: (time: string) => `Shown as of ${time}.`,
   asOf: (time: string) => `as of ${time}`,
   noNewsSince: (time: string) => `No news since ${time}`,
   noNewsYet: 'No news from the server yet',
@@ -50,6 +48,5 @@ export const appText = {
   noCentreMore: 'A manager adds you to a centre; then it appears here.',
   chooseCentre: 'Choose a centre',
   centreAndRole: (centre: string, role: string) => `${centre} · ${role}`,
-  away: 'Not sent: the server was not reached. Try again when the page is live.',
   documentTitle: (page: string, centre: string) => `${page} – ${centre} – Lanewright`,
 } as const;

@@ -1,0 +1,40 @@
+import { type ComponentType, lazy, Suspense } from 'react';
+import { BrowserRouter, Navigate, Route, Routes } from 'react-router-dom';
+import { wording } from '#shared/text/en/app.ts';
+import { FloorPage, WallPage } from '../features/floor/index.ts';
+import { Skeleton } from '../ui/page.tsx';
+import { Home } from './home.tsx';
+import { CentreLayout } from './layouts/centre-layout.tsx';
+import { NotFound } from './not-found.tsx';
+
+/** A page of a slice, fetched when it is first gone to. */
+function page<M, K extends keyof M>(load: () => Promise<M>, name: K) {
+  return lazy(async () => ({ default: (await load())[name] as ComponentType }));
+}
+
+const calls = () => import('../features/calls/index.ts');
+const CallsPage = page(calls, 'CallsPage');
+const CallPage = page(calls, 'CallPage');
+
+export function Router() {
+  return (
+    <BrowserRouter>
+      <Suspense fallback={<div className="p-8"><Skeleton label={wording.loading} /></div>}>
+        <Routes>
+          <Route path="/" element={<Home />} />
+          <Route path="/:centre/wall" element={<CentreLayout bare />}>
+            <Route index element={<WallPage />} />
+          </Route>
+          <Route path="/:centre" element={<CentreLayout />}>
+            <Route index element={<Navigate to="floor" replace />} />
+            <Route path="floor" element={<FloorPage />} />
+            <Route path="calls" element={<CallsPage />} />
+            <Route path="calls/:call" element={<CallPage />} />
+            <Route path="*" element={<NotFound />} />
+          </Route>
+          <Route path="*" element={<NotFound />} />
+        </Routes>
+      </Suspense>
+    </BrowserRouter>
+  );
+}
