@@ -67,8 +67,8 @@ export function secondaryOf(problem: Problem, machine: MachineData, steps: reado
   return until < machine.available ? Infinity : cost;
 }
 
-/** A whole plan's worth, from its orders; null when a pin breaks or a store can't last. */
-export function evaluate(problem: Problem, orders: readonly (readonly number[])[]): Solution | null {
+/** A whole plan's worth, from its orders; null when a pin breaks, a store can't last, or lateness costs more than `ceiling`. */
+export function evaluate(problem: Problem, orders: readonly (readonly number[])[], ceiling = Infinity): Solution | null {
   const late = new Int32Array(problem.sessions.length);
   const steps: Step[][] = [];
   for (const [m, machine] of problem.machines.entries()) {
@@ -76,7 +76,10 @@ export function evaluate(problem: Problem, orders: readonly (readonly number[])[
     if (!filled || !addLateness(problem, machine, filled, late)) return null;
     steps.push(filled);
   }
+  const primary = primaryCost(late);
+  if (primary > ceiling) return null;
   const deadline = deadlines(problem, late);
-  const secondary = problem.machines.reduce((sum, machine, m) => sum + secondaryOf(problem, machine, at(steps, m), deadline), 0);
-  return { orders: steps, late, primary: primaryCost(late), secondary };
+  let secondary = 0;
+  for (const [m, machine] of problem.machines.entries()) secondary += secondaryOf(problem, machine, at(steps, m), deadline);
+  return { orders: steps, late, primary, secondary };
 }

@@ -139,7 +139,7 @@ export interface Explanation {
 export type PlanCode =
   | 'late.even-alone' | 'late.waits-for-block' | 'late.lanes-free-at' | 'late.machine-available-at' | 'late.machine-away'
   | 'late.lanes-closed' | 'late.pinned-start' | 'late.pattern-change' | 'late.product-change' | 'late.service'
-  | 'block.no-machine' | 'block.exceeds-store' | 'block.too-late-to-know' | 'pins.conflict' | 'pins.unknown-block';
+  | 'block.no-machine' | 'block.exceeds-store' | 'pins.conflict' | 'stores.run-out';
 
 export interface LateSession {
   session: string;
@@ -153,7 +153,7 @@ export interface Plan {
   criteria: Criteria;
   /** Which criteria no other plan of these whole blocks can better, each among those equal before it. */
   proven: { sessionsLate: boolean; lateness: boolean; freshness: boolean; travel: boolean };
-  /** What no plan can undercut; lateness holds for plans with as few late sessions. */
+  /** What no plan can undercut; where `sessionsLate` is reached, lateness among plans that reach it. */
   bound: { sessionsLate: number; latenessMs: number };
   method: 'exact' | 'heuristic';
   late: LateSession[];
