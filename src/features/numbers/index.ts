@@ -1,0 +1,1 @@
+export { NumbersPage } from './numbers-page.tsx';
