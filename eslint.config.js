@@ -14,7 +14,12 @@ const socketWords = {
   selector: "CallExpression[callee.property.name=/^(on|emit)$/][callee.object.name=/^(socket|io|namespace)$/]",
   message: 'Sockets are spoken in platform/realtime and src/app/realtime.ts only.',
 };
-const literalText = { selector: 'JSXText[value=/[A-Za-z]{2,}/]', message: 'Wording comes from src/shared/text.' };
+const wording = 'Wording comes from src/shared/text.';
+const literalText = [
+  { selector: 'JSXText[value=/[A-Za-z]{2,}/]', message: wording },
+  { selector: 'JSXElement > JSXExpressionContainer > Literal[value=/[A-Za-z]{2,}/]', message: wording },
+  { selector: "JSXAttribute[name.name=/^(aria-label|aria-description|title|alt|placeholder)$/] > Literal[value=/[A-Za-z]{2,}/]", message: wording },
+];
 
 export default tseslint.config(
   { ignores: ['dist', '.data', 'node_modules', 'coverage'] },
@@ -59,7 +64,7 @@ export default tseslint.config(
       'react-hooks/exhaustive-deps': 'error',
       '@tanstack/query/exhaustive-deps': 'error',
       '@tanstack/query/no-unstable-deps': 'error',
-      'no-restricted-syntax': ['error', noDefault, socketWords, literalText],
+      'no-restricted-syntax': ['error', noDefault, socketWords, ...literalText],
       'max-lines-per-function': ['error', { max: 90, skipBlankLines: true, skipComments: true }],
     },
   },

@@ -19,7 +19,7 @@ const surplus = contract({ ...base, id: 'test.surplus', method: 'GET', path: '/a
 const broken = contract({ ...base, id: 'test.broken', method: 'GET', path: '/api/test-broken', response: ok });
 const misfit = contract({ ...base, id: 'test.misfit', method: 'GET', path: '/api/test-misfit', response: ok });
 const routes = [
-  serve(taken, async () => ({ ok: true })),
+  serve(taken, async () => ({ ok: true as const })),
   serve(surplus, async () => ({ a: 1, deep: { b: 2, hash: 'secret' } })),
   serve(broken, async () => {
     throw new Error('secret words of a fault');
