@@ -8,6 +8,8 @@ const FIRST_PAUSE_MS = 500;
 const LONGEST_PAUSE_MS = 10_000;
 /** A process that ran this long is taken for sound: its next death begins with the shortest pause again. */
 const SOUND_AFTER_MS = 30_000;
+/** Deaths in a row that are told. */
+const TOLD = 3;
 const STOP_WITHIN_MS = 10_000;
 
 /**
@@ -16,57 +18,64 @@ const STOP_WITHIN_MS = 10_000;
  * decides about a death before `settle()` was called: then it isn't started again.
  */
 export function keepRunning({ name, file, args = [], env, output, onMessage = () => {}, onFirstExit = () => {} }) {
-  let wanted = true;
   let settled = false;
-  let child;
+  let current;
   let failures = 0;
   let timer;
+  let over = false;
+  let turn = Promise.resolve();
 
   const launch = () => {
-    const began = Date.now();
-    child = spawn(process.execPath, ['--import', 'tsx', path.join(root, file), ...args], {
+    const child = spawn(process.execPath, ['--import', 'tsx', path.join(root, file), ...args], {
       cwd: root,
       env,
       detached: true, // its own group, so that ctrl-C in the terminal reaches us alone and we end it in order
       stdio: ['ignore', output, output, 'ipc'],
     });
+    const run = { child, began: Date.now(), unwanted: false };
+    current = run;
     child.on('message', onMessage);
     child.once('error', (error) => say(`${name} can't be started: ${error.message}`));
-    child.once('exit', (code, signal) => onExit(began, signal ?? `exit ${code}`));
+    child.once('exit', (code, signal) => {
+      if (!run.unwanted) died(run, signal ?? `exit ${code}`);
+    });
   };
-  const onExit = (began, how) => {
-    if (!wanted) return;
+  const died = (run, how) => {
     if (!settled) {
-      wanted = false;
       onFirstExit(how);
       return;
     }
-    if (Date.now() - began > SOUND_AFTER_MS) failures = 0;
+    if (Date.now() - run.began > SOUND_AFTER_MS) failures = 0;
     const wait = Math.min(FIRST_PAUSE_MS * 2 ** failures, LONGEST_PAUSE_MS);
     failures += 1;
-    say(`${name} stopped (${how}); starting it again`);
+    if (failures <= TOLD) say(`${name} stopped (${how}); starting it again${failures === TOLD ? ', and no more said about it until it has run for a while' : ''}`);
     timer = setTimeout(launch, wait);
+  };
+  const halt = async () => {
+    clearTimeout(timer);
+    current.unwanted = true;
+    await end(current.child);
   };
 
   launch();
   return {
-    pid: () => child.pid,
     /** From now on it is started again when it dies. */
     settle: () => {
       settled = true;
     },
-    /** Ends it and starts it anew at once. */
-    restart: async () => {
-      wanted = false;
-      clearTimeout(timer);
-      await end(child);
-      wanted = true;
-      launch();
-    },
+    /** Ends it for good. */
     stop: async () => {
-      wanted = false;
-      clearTimeout(timer);
-      await end(child);
+      over = true;
+      await turn;
+      await halt();
+    },
+    /** Ends it and starts it anew at once; one after the other when asked again meanwhile. */
+    restart: () => {
+      turn = turn.then(async () => {
+        if (!over) await halt();
+        if (!over) launch();
+      });
+      return turn;
     },
   };
 }
