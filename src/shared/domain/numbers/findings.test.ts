@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import { dispersion } from './dispersion.ts';
 import { poissonCdf } from './distributions.ts';
-import { changeFinding, laneFinding, SIGNIFICANCE, STRICT, trendFinding, type LaneFinding } from './findings.ts';
+import { ewmaRateChart } from './ewma.ts';
+import { changeFinding, driftFinding, laneFinding, SIGNIFICANCE, STRICT, trendFinding, type LaneFinding } from './findings.ts';
 import { funnel } from './funnel.ts';
 import { missing } from './missing.ts';
 import type { RateComparison } from './two-rates.ts';
@@ -53,5 +54,24 @@ describe('trendFinding', () => {
     expect(trendFinding({ improving: 0.0049, worsening: 0.99 })).toMatchObject({ code: 'trend.improving' });
     expect(trendFinding({ improving: 0.99, worsening: 0.0049 })).toMatchObject({ code: 'trend.worsening' });
     expect(trendFinding(missing('too-few'))).toEqual({ code: 'trend.too-few' });
+  });
+});
+
+describe('driftFinding', () => {
+  const steady = Array.from({ length: 20 }, () => 10);
+  const units = (counts: number[]): number[] => counts.map(() => 1);
+  const drift = (counts: number[]): ReturnType<typeof driftFinding> => driftFinding(ewmaRateChart(counts, units(counts), 10));
+
+  it('tells a rate that has moved, and for how long', () => {
+    const up = drift([...steady, 17, 17, 17, 17]);
+    expect(up).toMatchObject({ code: 'drift.up' });
+    expect(drift([...steady, 17, 17, 17, 17, 17])).toEqual({ code: 'drift.up', periods: (up as { periods: number }).periods + 1 });
+    expect(drift([...steady, 3, 3, 3, 3, 3, 3])).toMatchObject({ code: 'drift.down' });
+  });
+
+  it('is silent about one odd week, about what is over, and without data', () => {
+    expect(drift([...steady, 17])).toEqual({ code: 'drift.none' });
+    expect(drift([...steady, 17, 17, 17, 17, ...steady])).toEqual({ code: 'drift.none' });
+    expect(drift([])).toEqual({ code: 'drift.no-data' });
   });
 });

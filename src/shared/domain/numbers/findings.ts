@@ -1,6 +1,7 @@
 import { probabilityOfOutside } from './chance.ts';
 import type { Dispersion } from './dispersion.ts';
 import type { Funnel } from './funnel.ts';
+import type { EwmaPoint } from './ewma.ts';
 import { isMissing, type Missing } from './missing.ts';
 import type { RateComparison } from './two-rates.ts';
 
@@ -64,4 +65,19 @@ export function trendFinding(test: { improving: number; worsening: number } | Mi
   const p = Math.min(1, 2 * Math.min(test.improving, test.worsening));
   if (p >= STRICT) return { code: 'trend.steady', p };
   return { code: test.improving < test.worsening ? 'trend.improving' : 'trend.worsening', p };
+}
+
+export type DriftFinding =
+  | { code: 'drift.no-data' }
+  | { code: 'drift.none' }
+  /** The smoothed rate lies outside now, and has for `periods` in a row. */
+  | { code: 'drift.up' | 'drift.down'; periods: number };
+
+/** What the exponentially weighted chart says about now; an excursion that is over isn't a finding. */
+export function driftFinding(points: readonly EwmaPoint[]): DriftFinding {
+  const side = points[points.length - 1]?.outside;
+  if (side === undefined) return { code: 'drift.no-data' };
+  if (side === null) return { code: 'drift.none' };
+  const inside = points.findLastIndex((point) => point.outside !== side);
+  return { code: side === 'above' ? 'drift.up' : 'drift.down', periods: points.length - 1 - inside };
 }

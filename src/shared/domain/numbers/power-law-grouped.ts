@@ -24,8 +24,8 @@ export function fitGroupedPowerLaw(ends: readonly number[], counts: readonly num
   const last = ends[ends.length - 1];
   if (events === 0 || last === undefined || ends.length < 2) return missing('too-few');
   if (counts[0] === events || counts[counts.length - 1] === events) return missing('no-maximum');
-  const relative = ends.map((end) => end / last);
-  const score = (shape: number): number => groupedScore(relative, counts, shape);
+  const logs = ends.map((end) => Math.log(end / last));
+  const score = (shape: number): number => groupedScore(logs, counts, shape);
   // Positive near 0 and negative far out, as not all events lie in one end group.
   let low = 1;
   while (score(low) < 0) low /= 2;
@@ -35,20 +35,17 @@ export function fitGroupedPowerLaw(ends: readonly number[], counts: readonly num
   return { shape, scale: events / last ** shape, currentMtbf: last / (events * shape) };
 }
 
-/** dℓ/d(shape) with times as a share of the whole, so that the last logarithm is 0. */
-function groupedScore(ends: readonly number[], counts: readonly number[], shape: number): number {
-  let sum = 0;
-  for (let i = 0; i < ends.length; i += 1) {
-    if (counts[i] === 0) continue;
-    const end = ends[i] as number;
-    const start = i === 0 ? 0 : (ends[i - 1] as number);
-    if (start === 0) {
-      sum += (counts[i] as number) * Math.log(end);
-      continue;
-    }
-    // Divided through by endᵇ: (ln end − qᵇ ln start)/(1 − qᵇ), q = start/end.
-    const q = Math.exp(shape * Math.log(start / end));
-    sum += ((counts[i] as number) * (Math.log(end) - q * Math.log(start))) / (1 - q);
+/** dℓ/d(shape), with logarithms of times as a share of the whole, so that the last is 0. */
+function groupedScore(logs: readonly number[], counts: readonly number[], shape: number): number {
+  let sum = (counts[0] as number) * (logs[0] as number);
+  for (let i = 1; i < logs.length; i += 1) {
+    const count = counts[i] as number;
+    if (count === 0) continue;
+    const end = logs[i] as number;
+    const start = logs[i - 1] as number;
+    // Divided through by endᵇ: (ln end − q ln start)/(1 − q), q = (start/end)ᵇ.
+    const q = Math.exp(shape * (start - end));
+    sum += (count * (end - q * start)) / (1 - q);
   }
   return sum;
 }

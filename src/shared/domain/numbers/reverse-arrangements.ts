@@ -46,23 +46,26 @@ export function reverseArrangements(intervals: readonly number[]): ReverseArrang
 
 /** Pairs in which the later value is larger, and pairs of equal values, by merge sort in n·log n. */
 function countPairs(values: readonly number[]): { rising: number; equal: number } {
+  const n = values.length;
+  let sorted = Float64Array.from(values);
+  let merged = new Float64Array(n);
   let rising = 0;
-  const sort = (list: readonly number[]): readonly number[] => {
-    if (list.length < 2) return list;
-    const middle = list.length >> 1;
-    const [left, right] = [sort(list.slice(0, middle)), sort(list.slice(middle))];
-    const merged: number[] = [];
-    let i = 0;
-    for (const value of right) {
-      while (i < left.length && (left[i] as number) < value) merged.push(left[i++] as number);
-      rising += i;
-      merged.push(value);
+  for (let width = 1; width < n; width *= 2) {
+    for (let start = 0; start < n; start += 2 * width) {
+      const middle = Math.min(start + width, n);
+      const end = Math.min(start + 2 * width, n);
+      let [i, j] = [start, middle];
+      for (let k = start; k < end; k += 1) {
+        const fromLeft = i < middle && (j >= end || (sorted[i] as number) < (sorted[j] as number));
+        // A later value taken over exceeds every earlier one that went before it.
+        if (!fromLeft) rising += i - start;
+        merged[k] = (fromLeft ? sorted[i++] : sorted[j++]) as number;
+      }
     }
-    return merged.concat(left.slice(i));
-  };
-  const sorted = sort(values);
+    [sorted, merged] = [merged, sorted];
+  }
   let [equal, run] = [0, 0];
-  for (let i = 1; i < sorted.length; i += 1) {
+  for (let i = 1; i < n; i += 1) {
     run = sorted[i] === sorted[i - 1] ? run + 1 : 0;
     equal += run;
   }

@@ -27,10 +27,20 @@ export function union(...lists: (readonly Span[])[]): Span[] {
   return merged;
 }
 
+/** The list itself when it is sorted, disjoint and without empty spans already, else its union. */
+function tidy(list: readonly Span[]): readonly Span[] {
+  let end = Number.NEGATIVE_INFINITY;
+  for (const { from, to } of list) {
+    if (!(from > end && to > from)) return union(list);
+    end = to;
+  }
+  return list;
+}
+
 /** The moments covered by both. */
 export function intersect(left: readonly Span[], right: readonly Span[]): Span[] {
-  const a = union(left);
-  const b = union(right);
+  const a = tidy(left);
+  const b = tidy(right);
   const common: Span[] = [];
   for (let i = 0, j = 0; i < a.length && j < b.length; ) {
     const one = a[i] as Span;
@@ -46,10 +56,10 @@ export function intersect(left: readonly Span[], right: readonly Span[]): Span[]
 
 /** The moments covered by the first and not by the second. */
 export function subtract(spans: readonly Span[], holes: readonly Span[]): Span[] {
-  const cut = union(holes);
+  const cut = tidy(holes);
   const left: Span[] = [];
   let next = 0;
-  for (const span of union(spans)) {
+  for (const span of tidy(spans)) {
     let from = span.from;
     while (next < cut.length && (cut[next] as Span).to <= from) next += 1;
     for (let k = next; k < cut.length && (cut[k] as Span).from < span.to; k += 1) {
@@ -69,7 +79,7 @@ export function clip(spans: readonly Span[], window: Span): Span[] {
 
 /** Milliseconds covered: of the union, so that overlaps count once. */
 export function total(spans: readonly Span[]): number {
-  return union(spans).reduce((sum, span) => sum + (span.to - span.from), 0);
+  return tidy(spans).reduce((sum, span) => sum + (span.to - span.from), 0);
 }
 
 /** The window cut into cells of `step` milliseconds from its start; the last may be shorter. */

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { changeWords, laneList, laneWords, partWords, rateWords, trendWords, waitWords } from './numbers-words.ts';
+import { changeWords, driftWords, laneList, laneWords, partWords, rateWords, trendWords, waitWords } from './numbers-words.ts';
 
 describe('lanes', () => {
   it('are listed as people say them', () => {
@@ -47,6 +47,10 @@ describe('trends, rates, parts, waits', () => {
     expect(trendWords({ code: 'trend.steady', p: 0.4 })).toBe('No trend is shown. A slow one could still be hidden.');
     expect(trendWords({ code: 'trend.improving', p: 0.001 })).toContain('rarer');
     expect(trendWords({ code: 'trend.worsening', p: 0.001 })).toContain('more frequent');
+    expect(driftWords({ code: 'drift.up', periods: 1 }, 'week')).toBe('Drifting up: above what chance allows for 1 week.');
+    expect(driftWords({ code: 'drift.down', periods: 3 }, 'week')).toBe('Drifting down: below what chance allows for 3 weeks.');
+    expect(driftWords({ code: 'drift.none' }, 'week')).toBe('No drift is shown.');
+    expect(driftWords({ code: 'drift.no-data' }, 'week')).toContain('Nothing');
     expect(rateWords({ code: 'rate.value', rate: 4, low: 1.0899, high: 10.2416, level: 0.95 })).toBe('4.0 stops per thousand frames (95 % interval 1.1 to 10.2).');
     expect(rateWords({ code: 'rate.none', atMost: 3.689, frames: 1000 })).toBe('No stop in 1,000 frames: the true rate is probably below 3.7 per thousand.');
     expect(rateWords({ code: 'rate.no-frames' })).toContain('no rate');

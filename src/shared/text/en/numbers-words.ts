@@ -1,4 +1,4 @@
-import type { ChangeFinding, LaneFinding, TrendFinding } from '#shared/domain/numbers/findings.ts';
+import type { ChangeFinding, DriftFinding, LaneFinding, TrendFinding } from '#shared/domain/numbers/findings.ts';
 import type { PartFinding, RateFinding, WaitFinding } from '#shared/domain/numbers/findings-of-service.ts';
 
 const whole = new Intl.NumberFormat('en-US', { maximumFractionDigits: 0 });
@@ -80,6 +80,20 @@ export function trendWords(finding: TrendFinding): string {
       return 'Stops are getting more frequent; chance alone would seldom look like this.';
     case 'trend.steady':
       return 'No trend is shown. A slow one could still be hidden.';
+  }
+}
+
+/** @param period what one point of the chart covers, such as "week". */
+export function driftWords(finding: DriftFinding, period: string): string {
+  switch (finding.code) {
+    case 'drift.no-data':
+      return 'Nothing to see a drift in yet.';
+    case 'drift.none':
+      return 'No drift is shown.';
+    case 'drift.up':
+      return `Drifting up: above what chance allows for ${plural(finding.periods, period)}.`;
+    case 'drift.down':
+      return `Drifting down: below what chance allows for ${plural(finding.periods, period)}.`;
   }
 }
 
