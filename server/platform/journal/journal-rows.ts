@@ -36,7 +36,7 @@ export function entered(centre: Buffer, entry: DeviceEntry, receivedAt: number, 
 /** What a person or job did as a fact and its row. Ids rise within a millisecond, so facts of one decision keep their order. */
 export function decided(centre: Buffer, given: NewFact, now: number, place: Place): { fact: Fact; row: JournalRow } {
   const { type, data, by } = given;
-  const time = Math.max(now, (given.after ?? -Infinity) + 1);
+  const time = given.at ?? Math.max(now, (given.after ?? -Infinity) + 1);
   const source = `lanewright/${by.kind}/${by.id}`;
   const id = newId();
   const text = JSON.stringify(data);

@@ -11,8 +11,11 @@ export interface HouseAt {
   epoch: string;
 }
 
-/** A fact that a person or job wants to record. `after` is the time of the newest fact about its subject: it comes 1 ms later at least. */
-export type NewFact = { [T in FactType]: { type: T; data: FactData[T]; by: Person; after?: number } }[FactType];
+/**
+ * A fact that a person or job wants to record. `after` is the time of the newest fact about its subject: it comes 1 ms later at least.
+ * `at` is for what is written down afterwards with its own time (a run recorded by hand): it stands there, like a late event.
+ */
+export type NewFact = { [T in FactType]: { type: T; data: FactData[T]; by: Person; after?: number; at?: number } }[FactType];
 
 /** One element of a gateway's batch after validation: applied, or set aside with its reason and kept whole. */
 export interface DeviceEntry {

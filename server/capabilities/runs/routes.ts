@@ -1,0 +1,114 @@
+import { runContracts as c } from '#shared/contracts/runs.ts';
+import { businessDay, businessDayAt, isDate } from '#shared/domain/business-day.ts';
+import type { House } from '#shared/domain/house/state.ts';
+import { median } from '#shared/domain/numbers/percentiles.ts';
+import type { Deps } from '#server/deps.ts';
+import { personOf } from '#server/platform/http/person.ts';
+import { invalid, notFound } from '#server/platform/http/refusal.ts';
+import { type CentreRef, type Route, serve } from '#server/platform/http/route.ts';
+import type { HouseAt } from '#server/platform/journal/ledger.ts';
+import { cancelRun, planRun, recordRun } from './commands.ts';
+import type { createLibraries, Library } from './library.ts';
+import { machineLevels } from './machines.ts';
+import { addMachine, addPattern, revisePattern } from './patterns.ts';
+import { lanesDressed, runByKey, runsWithin } from './read-model.ts';
+import { patternSummary, revisionView, runDetail } from './view.ts';
+
+type Libraries = ReturnType<typeof createLibraries>;
+type RunsDeps = Pick<Deps, 'db' | 'ledger'>;
+export interface UsedBy {
+  (centre: CentreRef): Promise<Map<string, string[]>>;
+}
+
+export const runsRoutes = (deps: RunsDeps, libraries: Libraries, usedBy: UsedBy): Route[] => [
+  ...patternRoutes(deps, libraries, usedBy), ...machineRoutes(deps, libraries), ...runRoutes(deps, libraries),
+];
+
+function patternRoutes({ ledger }: RunsDeps, libraries: Libraries, usedBy: UsedBy): Route[] {
+  const detail = async (centre: CentreRef, code: string) => {
+    const library = await libraries.of(centre);
+    const pattern = library.patterns.find((p) => p.code === code);
+    const revisions = library.revisions.filter((r) => r.code === code);
+    const newest = revisions.at(-1);
+    if (!pattern || !newest) throw notFound('pattern.unknown', { pattern: code });
+    const used = (await usedBy(centre)).get(code) ?? [];
+    return { ...patternSummary(pattern, newest, used), revisions: revisions.toReversed().map((r) => revisionView(r, library)) };
+  };
+  return [
+    serve(c.patterns, async ({ centre }) => {
+      const [library, used] = [await libraries.of(centre), await usedBy(centre)];
+      return { patterns: library.patterns.flatMap((p) => {
+        const newest = library.revisions.findLast((r) => r.code === p.code);
+        return newest ? [patternSummary(p, newest, used.get(p.code) ?? [])] : [];
+      }) };
+    }),
+    serve(c.pattern, ({ centre, params }) => detail(centre, params.code)),
+    serve(c.addPattern, async ({ centre, body, actor }) => {
+      await addPattern(ledger, centre, { code: body.code, name: body.name, note: body.note ?? null, revision: body.revision, by: personOf(actor).name });
+      libraries.forget(centre);
+      return detail(centre, body.code);
+    }),
+    serve(c.revise, async ({ centre, params, body, actor }) => {
+      await revisePattern(ledger, centre, { code: params.code, note: body.note ?? null, revision: body.revision, by: personOf(actor).name });
+      libraries.forget(centre);
+      return detail(centre, params.code);
+    }),
+  ];
+}
+
+function machineRoutes({ db, ledger }: RunsDeps, libraries: Libraries): Route[] {
+  const machines = async (centre: CentreRef) => {
+    const [library, { state }, dressed] = await Promise.all([libraries.of(centre), ledger.read(centre), lanesDressed(db, centre.id)]);
+    return library.machines.map((machine) => ({
+      ...machineLevels(machine, state), capabilities: copy(machine.capabilities),
+      paceMs: median(state.runs.paces[machine.code] ?? []).value, lanesDressed: dressed.get(machine.code) ?? 0,
+    }));
+  };
+  return [
+    serve(c.machines, async ({ centre }) => ({ machines: await machines(centre) })),
+    serve(c.addMachine, async ({ centre, body }) => {
+      await addMachine(ledger, centre, body);
+      libraries.forget(centre);
+      const added = (await machines(centre)).find((m) => m.code === body.code);
+      if (!added) throw notFound('machine.unknown', { machine: body.code });
+      return added;
+    }),
+  ];
+}
+
+/** The record's arrays are read-only in the domain; an answer has its own. */
+const copy = <T>(value: T): never => structuredClone(value) as never;
+
+function runRoutes({ db, ledger }: RunsDeps, libraries: Libraries): Route[] {
+  const shown = async (centre: CentreRef, state: House, key: string) => {
+    const run = state.runs.active[key] ?? state.runs.ended.findLast((r) => r.key === key) ?? (await runByKey(db, centre.id, key));
+    if (!run) throw notFound('run.unknown');
+    return runDetail(run, state.runs, await libraries.of(centre));
+  };
+  /** Decides with the library as it is, and answers with the run. */
+  const decide = async (centre: CentreRef, make: (house: HouseAt, library: Library, now: number) => { decision: ReturnType<typeof cancelRun>; key: string }) => {
+    const library = await libraries.of(centre);
+    let key = '';
+    const after = await ledger.decide(centre, (house, now) => {
+      const made = make(house, library, now);
+      key = made.key;
+      return made.decision;
+    });
+    return shown(centre, after.state, key);
+  };
+  return [
+    serve(c.list, async ({ centre, query, now }) => {
+      if (query.date !== undefined && !isDate(query.date)) throw invalid('run.date-invalid', '/date');
+      const day = query.date === undefined ? businessDayAt(now, centre.zone, centre.cut) : businessDay(query.date, centre.zone, centre.cut);
+      const [past, { state }, library] = await Promise.all([runsWithin(db, centre.id, day.from, day.to), ledger.read(centre), libraries.of(centre)]);
+      const live = query.date === undefined ? Object.values(state.runs.active).filter((r) => !past.some((p) => p.key === r.key)) : [];
+      const begin = (run: (typeof past)[number]): number => run.startedAt ?? run.plannedStart ?? run.lastAt;
+      return { date: day.date, runs: [...past, ...live].sort((a, b) => begin(a) - begin(b)).map((run) => runDetail(run, state.runs, library)) };
+    }),
+    serve(c.plan, ({ centre, body, actor }) => decide(centre, (house, library, now) => planRun(house, library, body, personOf(actor), now))),
+    serve(c.record, ({ centre, body, actor }) => decide(centre, (house, library, now) => recordRun(house, library, body, personOf(actor), now))),
+    serve(c.cancel, ({ centre, params, body, actor }) => decide(centre, (house) => ({
+      decision: cancelRun(house, params.machine, params.run, body.reason, personOf(actor)), key: `${params.machine}/${params.run}`,
+    }))),
+  ];
+}
