@@ -48,7 +48,7 @@ export function connect(centre: string, board: BoardStore, queries: QueryClient)
   const invalidate = (topic: Topic) => void queries.invalidateQueries({ queryKey: [centre, topic] });
   const socket: Wire = io({ transports: ['websocket', 'polling'], reconnectionDelay: 500, reconnectionDelayMax: 4000, randomizationFactor: 0.5, autoConnect: false });
   const loop = handlers(board, hintGate(invalidate));
-  for (const event of Object.keys(TARGETS) as (keyof ServerEvents)[]) socket.on(event, loop[event] as never);
+  for (const event of Object.keys(TARGETS) as (keyof ServerEvents)[]) socket.on(event, loop[event]);
   let connectedBefore = false;
   socket.on('connect', () => {
     socket.emit('watch', { centre }, () => undefined);

@@ -25,7 +25,7 @@ describe('call', () => {
   });
 
   it('throws what the server refused, with fields and the time to wait', async () => {
-    vi.stubGlobal('fetch', () => Promise.resolve(answer(422, { code: 'lane.same', params: { lane: 3 }, fields: [{ pointer: '/to', code: 'lane.same' }] }, { 'retry-after': '2' })));
+    vi.stubGlobal('fetch', () => Promise.resolve(answer(422, { code: 'lane.same', params: { lane: 3 }, errors: [{ in: 'body', pointer: '/to', code: 'lane.same' }, { in: 'path', pointer: '/lane', code: 'field.type' }] }, { 'retry-after': '2' })));
     const problem = await call(floorContracts.move, { params: { centre: 'a', lane: 3 }, body: { to: 3 } }).catch((e: unknown) => e);
     expect(problem).toMatchObject({ status: 422, code: 'lane.same', params: { lane: 3 }, retryAfter: 2 });
     expect((problem as Problem).field('to')?.code).toBe('lane.same');

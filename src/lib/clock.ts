@@ -5,6 +5,8 @@ import { useSyncExternalStore } from 'react';
  * sent, so each only bounds the offset from below; the largest of the last few is the least delayed one.
  */
 const KEPT = 10;
+/** A correction larger than this is shown at once, not at the next tick. */
+const JUMP_MS = 500;
 const offsets: number[] = [];
 let offset = 0;
 
@@ -12,7 +14,9 @@ let offset = 0;
 export function heardServerTime(at: number): void {
   offsets.push(at - Date.now());
   if (offsets.length > KEPT) offsets.shift();
+  const before = offset;
   offset = Math.max(...offsets);
+  if (Math.abs(offset - before) > JUMP_MS) for (const ticker of tickers.values()) tick(ticker);
 }
 
 /** Now, as the server's clock says (epoch ms). */

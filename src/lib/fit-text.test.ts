@@ -30,5 +30,6 @@ describe('a text that is never cut', () => {
 it('takes the longest wording that fits', () => {
   expect(fitWord(['out of service', 'out'], { width: 60, size: 12, weight: 700 }, measure)).toEqual({ word: 'out of service', stretch: 62.5 });
   expect(fitWord(['out of service', 'out'], { width: 24, size: 12, weight: 700 }, measure)).toEqual({ word: 'out', stretch: 100 });
+  expect(fitWord(['mechanic in', 'mech.\nin'], { width: 22, size: 12, weight: 700 }, measure)).toEqual({ word: 'mech.\nin', stretch: 62.5 });
   expect(fitWord(['out'], { width: 5, size: 12, weight: 700 }, measure)).toBeNull();
 });

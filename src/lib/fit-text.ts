@@ -39,10 +39,13 @@ export function fitText(title: string, seconds: readonly string[], room: Room, m
   return null;
 }
 
-/** The first of several wordings that fits, longest first, at the widest font that does. */
+/** The first of several wordings that fits, longest first, at the widest font that does; `\n` in one breaks a line. */
 export function fitWord(words: readonly string[], room: { width: number; size: number; weight: number }, measure: Measure): { word: string; stretch: Stretch } | null {
   for (const word of words) {
-    for (const [stretch] of STRETCHES) if (measure(word, { size: room.size, weight: room.weight, stretch }) <= room.width) return { word, stretch };
+    for (const [stretch] of STRETCHES) {
+      const widest = Math.max(...word.split('\n').map((line) => measure(line, { size: room.size, weight: room.weight, stretch })));
+      if (widest <= room.width) return { word, stretch };
+    }
   }
   return null;
 }

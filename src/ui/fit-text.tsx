@@ -1,9 +1,10 @@
 import { canvasMeasure, fitText, useFontReady } from '../lib/fit-text.ts';
 
-/** A title with second parts in a known width (px). Narrows, then drops second parts, then shows nothing: never cut. */
-export function FitText({ title, seconds = [], width, size = 12.5 }: { title: string; seconds?: readonly string[]; width: number; size?: number }) {
+/** A title with second parts in a known width (px). Narrows, then drops second parts, then takes the short form, then shows nothing: never cut. */
+export function FitText({ title, short, seconds = [], width, size = 12.5 }: { title: string; /** Said instead where not even the title fits: initials, a time. */ short?: string; seconds?: readonly string[]; width: number; size?: number }) {
   useFontReady();
-  const fitted = fitText(title, seconds, { width, size, titleWeight: 690, secondWeight: 480, gap: 8 }, canvasMeasure);
+  const room = { width, size, titleWeight: 690, secondWeight: 480, gap: 8 };
+  const fitted = fitText(title, seconds, room, canvasMeasure) ?? (short ? fitText(short, [], room, canvasMeasure) : null);
   if (!fitted) return null;
   return (
     <span className="whitespace-nowrap" style={{ fontSize: size, fontStretch: `${fitted.stretch}%` }}>

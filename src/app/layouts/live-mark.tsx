@@ -12,7 +12,7 @@ export function LiveMark() {
   return (
     <span role="status" data-live={state} className="flex items-center gap-1.5 whitespace-nowrap text-dim">
       <span aria-hidden className={classes('size-2.5', state === 'stale' ? '' : 'rounded-full', DOT[state])} />
-      {state === 'stale' && since !== null ? appText.asOf(timeWithSeconds(since)) : wording[state]}
+      <span className={state === 'live' ? 'max-[900px]:sr-only' : undefined}>{state === 'stale' && since !== null ? appText.asOf(timeWithSeconds(since)) : wording[state]}</span>
     </span>
   );
 }

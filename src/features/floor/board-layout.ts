@@ -30,12 +30,12 @@ export interface Limits {
   inner: number;
   outer: number;
 }
-export const DESK: Limits = { minStrip: 26, maxStrip: 92, inner: 0.16, outer: 0.3 };
+export const DESK: Limits = { minStrip: 26, maxStrip: 92, inner: 0.14, outer: 0.34 };
 /** On the wall two narrow figures of 79 px height (94 px wide in Archivo at width 62) stand on a strip. */
 export const WALL: Limits = { minStrip: 96, maxStrip: 150, inner: 0.1, outer: 0.15 };
 
-const innerOf = (strip: number, limits: Limits): number => Math.round(Math.min(16, Math.max(7, strip * limits.inner)));
-const outerOf = (strip: number, limits: Limits): number => Math.round(Math.min(36, Math.max(8, strip * limits.outer)));
+const innerOf = (strip: number, limits: Limits): number => Math.round(Math.min(16, Math.max(5, strip * limits.inner)));
+const outerOf = (strip: number, limits: Limits): number => Math.round(Math.min(36, Math.max(10, strip * limits.outer)));
 const widthOf = (pairs: number, strip: number, limits: Limits): number =>
   pairs * (2 * strip + innerOf(strip, limits)) + (pairs - 1) * outerOf(strip, limits);
 
@@ -61,7 +61,7 @@ function place(lanes: number, width: number, { pairs, banks: count, strip }: { p
   const most = Math.ceil(pairs / count);
   const spare = most > 1 ? Math.max(0, width - widthOf(most, strip, limits)) / (most - 1) : 0;
   const gap = innerOf(strip, limits);
-  const between = outerOf(strip, limits) + Math.min(spare, strip * 0.5);
+  const between = outerOf(strip, limits) + Math.min(spare, strip);
   const banks: Bank[] = [];
   for (let bank = 0, pair = 0; bank < count; bank++) {
     const here = Math.floor(pairs / count) + (bank < pairs % count ? 1 : 0);
@@ -79,7 +79,7 @@ function bankOf({ pair, here, lanes }: { pair: number; here: number; lanes: numb
     bank.strips.push({ lane: left, x, width: strip });
     if (left + 1 > lanes) continue;
     bank.strips.push({ lane: left + 1, x: x + strip + gap, width: strip });
-    bank.returns.push({ pair: left, x: x + strip + 1, width: gap - 2 });
+    bank.returns.push({ pair: left, x: x + strip, width: gap });
   }
   return bank;
 }
@@ -92,6 +92,8 @@ export interface Heights {
   deck: number;
   lane: number;
   approach: number;
+  /** Rows of bars under the foul line: now, and next where there is room. */
+  rows: 1 | 2;
   /** Whole strip: cap + deck + lane + approach. */
   strip: number;
   bar: number;
@@ -99,19 +101,40 @@ export interface Heights {
   bank: number;
 }
 
-const MIN_LANE = 96;
 
-/** Splits the height of a bank of `strip` px wide lanes; the lane takes what the rest leaves. `number` is the figure's size. */
-export function heightsOf(bankHeight: number, strip: number, number: number): Heights {
-  const cap = Math.round(Math.min(64, Math.max(38, strip * 0.7)));
-  const deck = Math.round(Math.min(66, Math.max(28, strip * 0.82)));
-  const approach = Math.round(number * 1.06 + 16);
-  const bar = 28;
+/** What differs between a desk and the wall's far layer, px. */
+export interface Face {
+  cap: number;
+  deck: number;
+  approach: number;
+  bar: number;
+  rows: 1 | 2;
+  minLane: number;
+}
+export const deskFace = (strip: number, figure: number): Face => ({
+  cap: Math.round(Math.min(60, Math.max(38, strip * 0.7))),
+  deck: Math.round(Math.min(64, Math.max(28, strip * 0.82))),
+  approach: Math.round(figure * 1.06 + 16),
+  bar: 28,
+  rows: 2,
+  minLane: 96,
+});
+/**
+ * State large on the machine, figures without the air that a font leaves above and below them. From three banks on only the
+ * far layer is left: state, figure, who is there.
+ */
+export const wallFace = (figure: number, banks: number): Face =>
+  banks <= 2
+    ? { cap: 84, deck: 48, approach: Math.round(figure * 0.7 + 22), bar: 36, rows: 2, minLane: 96 }
+    : { cap: 58, deck: 0, approach: Math.round(figure * 0.7 + 14), bar: 26, rows: 1, minLane: 14 };
+
+/** Splits the height of a bank; the lane takes what the rest leaves. */
+export function heightsOf(bankHeight: number, { minLane, ...face }: Face): Heights {
   const barGap = 5;
-  const under = 2 * (bar + barGap) + 4;
-  const lane = Math.max(MIN_LANE, Math.floor(bankHeight - cap - deck - approach - under));
-  const whole = cap + deck + lane + approach;
-  return { cap, deck, lane, approach, strip: whole, bar, barGap, bank: whole + under };
+  const under = face.rows * (face.bar + barGap) + 4;
+  const lane = Math.max(minLane, Math.floor(bankHeight - face.cap - face.deck - face.approach - under));
+  const strip = face.cap + face.deck + lane + face.approach;
+  return { ...face, lane, strip, barGap, bank: strip + under };
 }
 
 /** Size of a lane's figure, px: two figures, narrow, within the strip. */

@@ -23,7 +23,7 @@ function world(extra: Partial<BoardWorld> = {}) {
   const store = new BoardStore({
     fetchSnapshot: () =>
       new Promise((resolve, reject) => {
-        asked.push({ give: (s) => (resolve(s), settle()), fail: (e = new Error('away')) => (reject(e as Error), settle()) });
+        asked.push({ give: (s) => (resolve(s), settle()), fail: (e = new Error('away')) => (reject(e), settle()) });
       }),
     after: (ms, run) => {
       const timer = { ms, run };

@@ -7,6 +7,8 @@ import { filmShare, rigShare } from '../lane-mark.ts';
 export const filmOpacity = (strength: number): number => 0.13 + 0.72 * Math.min(1, Math.max(0, strength));
 /** Where the count stands on a lane whose film length nobody told: at 41 ft, the middle of what is usual. */
 const USUAL_SHARE = 41 / 60;
+/** Lower boards than this show film only: the far layer of a large house on the wall. */
+const NEAR_LAYER = 60;
 
 interface Props {
   view: LaneView;
@@ -22,12 +24,12 @@ export function Boards({ view, now, width, height }: Props) {
   return (
     <span className="boards">
       {rig === null ? <Film view={view} share={share} height={height} width={width} /> : <Rig share={rig} film={share ?? 1} height={height} width={width} />}
-      <svg aria-hidden className="darts" viewBox="0 0 70 20" style={{ height: Math.max(8, width * 0.3) }} preserveAspectRatio="none">
+      {height < NEAR_LAYER ? null : <svg aria-hidden className="darts" viewBox="0 0 70 20" style={{ height: Math.max(8, width * 0.3) }} preserveAspectRatio="none">
         <path d="M3 14l2 6H1zM13 9l2 6h-4zM23 4.5l2 6h-4zM35 0l2.2 6.5h-4.4zM47 4.5l2 6h-4zM57 9l2 6h-4zM67 14l2 6h-4z" />
-      </svg>
+      </svg>}
       {view.bumpers ? <span className="rails" /> : null}
       {view.outOfService ? <span className="closed" /> : null}
-      {view.brokenOff ? <Redo width={width} /> : null}
+      {view.brokenOff && height >= NEAR_LAYER ? <Redo width={width} /> : null}
     </span>
   );
 }
@@ -38,13 +40,13 @@ function Film({ view, share, width, height }: { view: LaneView; share: number | 
   const size = Math.min(22, Math.max(11, width * 0.4));
   const above = edge + 4;
   const bottom = above + size > height ? height - size - 2 : above;
-  const shown = view.hearsDeliveries || view.film.deliveries > 0;
+  const shown = height >= NEAR_LAYER && !view.outOfService && !view.brokenOff && (view.hearsDeliveries || view.film.deliveries > 0);
   return (
     <>
       {share === null ? null : (
         <>
           <span className="film" style={{ height: edge, opacity: filmOpacity(view.film.strength) }} />
-          <span className="film-edge" data-unverified={!view.film.verified} style={{ bottom: edge - 2 }} />
+          {view.brokenOff ? null : <span className="film-edge" data-unverified={!view.film.verified} style={{ bottom: edge - 2 }} />}
         </>
       )}
       {shown ? <Balls count={view.film.deliveries} size={size} width={width} bottom={bottom} /> : null}

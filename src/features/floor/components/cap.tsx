@@ -21,18 +21,18 @@ const GLYPH = { 'unanswered': 'unanswered', 'danger': 'unanswered', 'answered': 
 /** The machine at the head of a lane: a short line at rest, else a mark with its clock or words. */
 export function Cap({ mark, since, now, width, height }: Props) {
   useFontReady();
-  const size = Math.min(26, Math.max(11.5, height * 0.29));
+  const size = Math.min(34, Math.max(11.5, height * (height > 70 ? 0.4 : 0.29)));
   const glyph = mark in GLYPH ? GLYPH[mark as keyof typeof GLYPH] : null;
-  const room = { width: width - 5, weight: 760 };
+  const room = { width: width - 4, weight: 760 };
   const clock = since === null || mark === 'mechanic-in' ? null : fitWord([capClock(now - since)], { ...room, size }, canvasMeasure);
   const words = WORDS[mark];
-  const wordSize = Math.min(20, Math.max(10.5, size * 0.86));
-  const word = words ? fitWord(words, { ...room, width: width - 8, size: wordSize }, canvasMeasure) : null;
+  const wordSize = Math.min(22, Math.max(10.5, size * 0.86));
+  const word = words ? fitWord(words, { ...room, size: wordSize, weight: 700 }, canvasMeasure) : null;
   return (
     <span className="cap">
       <span className="cap-in">
         {mark === 'running' ? <span className="rest" /> : null}
-        {glyph ? <Mark kind={glyph} size={Math.min(height * 0.4, width * 0.52)} /> : null}
+        {glyph ? <Mark kind={glyph} size={Math.round(Math.min(height * 0.4, width * 0.5))} /> : null}
         {clock ? (
           <span className="cap-clock" style={{ fontSize: size, fontStretch: `${clock.stretch}%` }}>
             {clock.word}

@@ -39,7 +39,7 @@ function Panel({ view, mode, onMode, onLeave, callAddress }: Props & { view: Lan
       <header className="flex items-start gap-4">
         <LaneBadge lane={view.lane} size={40} tone={TONE[mark as keyof typeof TONE] ?? 'plain'} />
         <div className="min-w-0 grow">
-          <h2 id="lane-heading" ref={heading} tabIndex={-1} className="type-title text-xl outline-offset-4">
+          <h2 id="lane-heading" ref={heading} tabIndex={-1} className="type-title text-xl outline-none">
             <span className="sr-only">{laneWords.lane(view.lane)}: </span>
             <Plays view={view} />
           </h2>

@@ -9,7 +9,7 @@ import { filmOpacity } from './boards.tsx';
 import { Pins } from './pins.tsx';
 
 const WORD: Partial<Record<LaneMark, string>> = {
-  'mechanic-in': capWords.mechanicIn[1], 'out-of-service': capWords.out[1], 'parked': capWords.parked[0], 'off': capWords.off[0], 'stopped': capWords.stopped[1],
+  'mechanic-in': capWords.mechanicIn[1].replace('\n', ' '), 'out-of-service': capWords.out[1], 'parked': capWords.parked[0], 'off': capWords.off[0], 'stopped': capWords.stopped[1],
   'cause-missing': capWords.cause[0], 'unheard': capWords.unheard[0],
 };
 const TONE: Partial<Record<LaneMark, string>> = { 'unanswered': 'text-red', 'danger': 'text-red', 'answered': 'text-amber' };

@@ -46,7 +46,7 @@ function Drawn({ view, x, width, heights, figure, selected, onSelect }: Props & 
   const content = (
     <>
       <Cap mark={mark} since={since} now={now} width={width} height={heights.cap} />
-      <span className="deck">{view.machine === 'unknown' ? null : <Pins standing={view.pins} />}</span>
+      {heights.deck === 0 ? null : <span className="deck">{view.machine === 'unknown' ? null : <Pins standing={view.pins} />}</span>}
       <Boards view={view} now={now} width={width} height={heights.lane - 5} />
       <span className="approach">
         <span key={changes} className={changes > 0 ? 'figure flash' : 'figure'} style={{ fontSize: figure }}>

@@ -32,6 +32,9 @@ export function NightLine({ sessionAddress }: { sessionAddress: ((session: strin
           {Math.abs(tick.x - nowX) < 48 || tick.x > size.width - 40 ? null : <span className="absolute top-0 left-1 text-[0.71875rem] leading-4 text-dim [font-stretch:88%]">{timeOfDay(tick.at, zone)}</span>}
         </div>
       ))}
+      <div aria-hidden className="absolute inset-y-0 border-l-2 border-ink" style={{ left: nowX }}>
+        <b className="type-clock absolute top-0 -left-px rounded-r-[3px] bg-ink px-1.5 text-[0.75rem] leading-[17px] text-paper">{nowText}</b>
+      </div>
       <ul>
         {night.items.map((item) => (
           <li key={item.key}>
@@ -39,9 +42,6 @@ export function NightLine({ sessionAddress }: { sessionAddress: ((session: strin
           </li>
         ))}
       </ul>
-      <div aria-hidden className="absolute inset-y-0 border-l-2 border-ink" style={{ left: nowX }}>
-        <b className="type-clock absolute top-0 -left-px rounded-r-[3px] bg-ink px-1.5 text-[0.75rem] leading-[17px] text-paper">{nowText}</b>
-      </div>
     </section>
   );
 }
@@ -52,8 +52,8 @@ function Item({ item, top, height, zone, address }: { item: NightItem; top: numb
   const label = item.label ? (
     <span
       aria-hidden
-      className="pointer-events-none absolute whitespace-nowrap"
-      style={{ left: item.label.inside ? 7 : item.label.x - item.x + 6, fontSize: LABEL.size, fontWeight: LABEL.weight, fontStretch: `${LABEL.stretch}%`, lineHeight: `${height}px`, color: item.label.inside ? undefined : 'var(--dim)' }}
+      className={`pointer-events-none absolute whitespace-nowrap ${item.label.inside ? '' : 'bg-paper px-1'}`}
+      style={{ left: item.label.inside ? 7 : item.label.x - item.x + 3, fontSize: LABEL.size, fontWeight: LABEL.weight, fontStretch: `${LABEL.stretch}%`, lineHeight: `${height}px`, color: item.label.inside ? undefined : 'var(--dim)' }}
     >
       {item.label.text}
     </span>

@@ -21,13 +21,13 @@ interface Props {
 /** Lanes side by side as they stand, ball returns between the pairs, under them who is there and what comes next. */
 export function PlanBank({ bank, heights, figure, now, next, selected, onSelect, sessionAddress }: Props) {
   const sizes = {
-    '--bank-h': `${heights.bank}px`, '--strip-h': `${heights.strip}px`, '--cap-h': `${heights.cap}px`, '--deck-h': `${heights.deck - 2}px`,
+    '--bank-h': `${heights.bank}px`, '--strip-h': `${heights.strip}px`, '--cap-h': `${heights.cap}px`, '--deck-h': `${Math.max(0, heights.deck - 2)}px`,
     '--lane-h': `${heights.lane}px`, '--approach-h': `${heights.approach}px`, '--bar-h': `${heights.bar}px`,
   } as CSSProperties;
   const row = (bars: readonly Bar[], top: number) =>
     bars.map((bar) => {
       const span = spanIn(bank, bar.from, bar.to);
-      return span ? <PlanBar key={bar.key} bar={bar} {...span} top={top} address={sessionAddress && bar.session ? sessionAddress(bar.session) : null} /> : null;
+      return span ? <PlanBar key={bar.key} bar={bar} {...span} top={top} tall={heights.bar} address={sessionAddress && bar.session ? sessionAddress(bar.session) : null} /> : null;
     });
   return (
     <div className="bank" style={sizes}>
@@ -36,14 +36,16 @@ export function PlanBank({ bank, heights, figure, now, next, selected, onSelect,
       ))}
       <Returns bank={bank} heights={heights} />
       {row(now, heights.strip + heights.barGap)}
-      {row(next, heights.strip + heights.bar + 2 * heights.barGap)}
+      {heights.rows < 2 ? null : row(next, heights.strip + heights.bar + 2 * heights.barGap)}
     </div>
   );
 }
 
-function PlanBar({ bar, x, width, top, address }: { bar: Bar; x: number; width: number; top: number; address: string | null }) {
-  const place = { className: 'bar', 'data-look': bar.look, title: [bar.text.title, ...bar.text.second].join(' · '), style: { left: x, width, top } };
-  const text = <FitText title={bar.text.title} seconds={bar.text.second} width={width - 16} size={13} />;
+function PlanBar({ bar, x, width, top, tall, address }: { bar: Bar; x: number; width: number; top: number; tall: number; address: string | null }) {
+  const pad = width < 90 ? 5 : 9;
+  const size = Math.round(tall * 0.47);
+  const place = { className: 'bar', 'data-look': bar.look, title: [bar.text.title, ...bar.text.second].join(' · '), style: { left: x, width, top, paddingInline: pad } };
+  const text = <FitText title={bar.text.title} short={bar.text.short} seconds={bar.text.second} width={width - 2 * pad} size={size} />;
   const name = [bar.text.title, ...bar.text.second].join(', ');
   return address ? (
     <Link to={address} aria-label={name} {...place}>

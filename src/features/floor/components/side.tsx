@@ -39,26 +39,26 @@ export function Calls({ address }: { address: Addresses['call'] }) {
       {calls.length === 0 ? <p className="border-t border-rule py-2 text-dim">{floorWords.noCalls}</p> : null}
       <ul>
         {calls.map((call) => (
-          <li key={call.id} data-call={call.id} className="grid grid-cols-[2.75rem_minmax(0,1fr)_auto] gap-x-3 border-t border-rule py-2.5">
+          <li key={call.id} data-call={call.id} className="grid grid-cols-[2.75rem_minmax(0,1fr)] gap-x-3 border-t border-rule py-2.5">
             <LaneBadge lane={call.scope === 'house' ? '–' : call.lane} tone={toneOf(call)} />
             <div className="min-w-0">
-              <b className="block leading-tight font-[680]">
-                {address ? (
-                  <Link to={address(call.id)} className="hover:underline">
-                    {callTitle(call)}
-                  </Link>
-                ) : (
-                  callTitle(call)
-                )}
-              </b>
+              <div className="flex items-baseline justify-between gap-3">
+                <b className="min-w-0 leading-tight font-[680]">
+                  {address ? (
+                    <Link to={address(call.id)} className="hover:underline">
+                      {callTitle(call)}
+                    </Link>
+                  ) : (
+                    callTitle(call)
+                  )}
+                </b>
+                <span className={call.status === 'unanswered' ? 'whitespace-nowrap text-red' : 'whitespace-nowrap'}>
+                  {call.status === 'unanswered' ? <Mark kind="unanswered" size={12} className="mr-1" /> : null}
+                  <RunningClock since={call.raisedAt} className="type-clock text-[1.1875rem]" />
+                </span>
+              </div>
               <span className="type-label block leading-snug">{[callPlace(call), call.playing].filter(Boolean).join(' · ')}</span>
-            </div>
-            <div className="text-right">
-              <span className={call.status === 'unanswered' ? 'text-red' : undefined}>
-                {call.status === 'unanswered' ? <Mark kind="unanswered" size={12} className="mr-1" /> : null}
-                <RunningClock since={call.raisedAt} className="type-clock text-[1.1875rem]" />
-              </span>
-              <span className="type-label block max-w-[5.75rem] leading-tight">{callWho(call, now)}</span>
+              <span className="block text-[0.8125rem] leading-snug font-[560]">{callWho(call, now)}</span>
             </div>
           </li>
         ))}

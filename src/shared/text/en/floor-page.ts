@@ -103,7 +103,7 @@ export const laneWords = {
   progress: (game: number, frame: number) => `${game}, frame ${frame}`,
   openLane: (lane: number) => `Open lane ${lane}`,
   closeLane: (lane: number) => `Close lane ${lane}`,
-  moveTo: 'Move to another lane',
+  moveTo: 'Move',
   moveField: 'To lane',
   moveGo: (to: string) => (to ? `Move to lane ${to}` : 'Move'),
   raiseCall: 'Raise a call',

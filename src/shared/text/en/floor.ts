@@ -60,14 +60,14 @@ export function laneSentence(view: LaneView, now: number): string {
   return parts.filter((part) => part !== null).join(', ');
 }
 
-/** Words inside a machine where there is little room: the longest that fits is taken. */
+/** Words inside a machine where there is little room: the longest that fits is taken; \n breaks a line. */
 export const capWords = {
-  mechanicIn: ['mechanic in', 'mech. in'],
+  mechanicIn: ['mechanic in', 'mech.\nin'],
   out: ['out of service', 'out'],
   parked: ['parked'],
   off: ['off'],
   stopped: ['stopped', 'stop'],
-  cause: ['cause?'],
+  cause: ['cause?', 'why?'],
   unheard: ['unheard', '?'],
   redo: 'redo',
 } as const;
@@ -78,29 +78,36 @@ export const boardWords = { redo: ['clean and redo', 'redo'] } as const;
 /** What stands in a bar: its name, and what is dropped first when there is no room. */
 export interface BarText {
   title: string;
+  /** Where not even the title fits. */
+  short: string;
   second: string[];
 }
+
+/** `Thursday Scratch` → `TS`; one word keeps its first letter. */
+const initials = (name: string): string => name.split(/\s+/).map((word) => word.charAt(0)).join('').toUpperCase().slice(0, 3);
 
 export function sessionNowText(session: SessionBar, zone: string): BarText {
   const place = session.game === null ? null : `game ${session.game}${session.frame === null ? '' : ` · frame ${session.frame}`}`;
   const warm = session.phase === 'warm-up' ? `warm-up till ${timeOfDay(session.startAt, zone)}` : null;
-  return { title: session.name, second: [warm, place, `about ${timeOfDay(session.endAt, zone)}`].filter((p) => p !== null) };
+  return { title: session.name, short: initials(session.name), second: [warm, place, `about ${timeOfDay(session.endAt, zone)}`].filter((p) => p !== null) };
 }
 
 export const sessionNextText = (session: SessionBar, zone: string): BarText => ({
   title: `${session.name} ${timeOfDay(session.startAt, zone)}`,
+  short: initials(session.name),
   second: session.says ? [session.says] : [],
 });
 
 export function useText(use: NonNullable<LaneView['use']>, zone: string): BarText {
   const title = use.label ?? (use.kind === 'open' ? 'Open' : use.kind === 'unknown' ? 'In use' : useNames[use.kind]);
-  return { title, second: [use.quiet ? 'quiet' : null, use.until === null ? null : timeOfDay(use.until, zone)].filter((p) => p !== null) };
+  return { title, short: initials(title), second: [use.quiet ? 'quiet' : null, use.until === null ? null : timeOfDay(use.until, zone)].filter((p) => p !== null) };
 }
 
 export function runText(run: RunBar, zone: string): BarText {
   const end = run.endAt === null ? null : `${run.forecast ? 'done about' : 'done'} ${timeOfDay(run.endAt, zone)}`;
   return {
     title: `Run ${run.run}`,
+    short: run.run,
     second: [`${run.done} of ${run.lanes.length} dressed`, run.laneNow === null ? null : `${run.laneNow} now`, end, run.verified ? null : 'pattern unverified'].filter((p) => p !== null),
   };
 }
