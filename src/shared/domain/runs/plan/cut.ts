@@ -73,7 +73,7 @@ export function formBlocks(jobs: readonly LaneJob[], machines: readonly PlanMach
     else byKey.set(keyOf(job), [job]);
   }
   const fitting = [...byKey.values()].flatMap((group) => {
-    const most = mostLanes(at(group, 0), machines);
+    const most = Math.min(group.length, mostLanes(at(group, 0), machines));
     return Array.from({ length: Math.ceil(group.length / most) }, (_, i) => group.slice(i * most, (i + 1) * most));
   });
   return halve(fitting, machines.length).map((group) => {
