@@ -191,6 +191,17 @@ CREATE TABLE `lane` (
   PRIMARY KEY (`centre_id`,`lane`)
 ) ENGINE=InnoDB DEFAULT CHARSET=utf8mb4 COLLATE=utf8mb4_unicode_ci;
 
+CREATE TABLE `lane_out` (
+  `centre_id` binary(16) NOT NULL,
+  `lane` tinyint(3) unsigned NOT NULL,
+  `from_at` datetime(3) NOT NULL,
+  `version` bigint(20) unsigned NOT NULL,
+  `to_at` datetime(3) DEFAULT NULL,
+  `reason` varchar(300) NOT NULL,
+  PRIMARY KEY (`centre_id`,`lane`,`from_at`),
+  KEY `lane_out_to` (`centre_id`,`to_at`)
+) ENGINE=InnoDB DEFAULT CHARSET=utf8mb4 COLLATE=utf8mb4_unicode_ci;
+
 CREATE TABLE `lane_state` (
   `centre_id` binary(16) NOT NULL,
   `lane` tinyint(3) unsigned NOT NULL,
@@ -257,6 +268,15 @@ CREATE TABLE `league` (
   PRIMARY KEY (`centre_id`,`id`)
 ) ENGINE=InnoDB DEFAULT CHARSET=utf8mb4 COLLATE=utf8mb4_unicode_ci;
 
+CREATE TABLE `machine` (
+  `centre_id` binary(16) NOT NULL,
+  `code` varchar(40) CHARACTER SET utf8mb4 COLLATE utf8mb4_nopad_bin NOT NULL,
+  `name` varchar(60) NOT NULL,
+  `capabilities` longtext CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL CHECK (json_valid(`capabilities`)),
+  `created_at` datetime(3) NOT NULL,
+  PRIMARY KEY (`centre_id`,`code`)
+) ENGINE=InnoDB DEFAULT CHARSET=utf8mb4 COLLATE=utf8mb4_unicode_ci;
+
 CREATE TABLE `mail_outbox` (
   `centre_id` binary(16) NOT NULL,
   `id` binary(16) NOT NULL,
@@ -295,6 +315,14 @@ CREATE TABLE `membership_league` (
   CONSTRAINT `membership_league_fk` FOREIGN KEY (`centre_id`, `user_id`) REFERENCES `membership` (`centre_id`, `user_id`) ON DELETE CASCADE
 ) ENGINE=InnoDB DEFAULT CHARSET=utf8mb4 COLLATE=utf8mb4_unicode_ci;
 
+CREATE TABLE `night_report` (
+  `centre_id` binary(16) NOT NULL,
+  `business_date` date NOT NULL,
+  `issued_at` datetime(3) NOT NULL,
+  `figures` longtext CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL CHECK (json_valid(`figures`)),
+  PRIMARY KEY (`centre_id`,`business_date`)
+) ENGINE=InnoDB DEFAULT CHARSET=utf8mb4 COLLATE=utf8mb4_unicode_ci;
+
 CREATE TABLE `outbox` (
   `centre_id` binary(16) NOT NULL,
   `seq` bigint(20) unsigned NOT NULL,
@@ -302,6 +330,25 @@ CREATE TABLE `outbox` (
   `topics` longtext CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL CHECK (json_valid(`topics`)),
   `written_at` datetime(3) NOT NULL,
   PRIMARY KEY (`centre_id`,`seq`)
+) ENGINE=InnoDB DEFAULT CHARSET=utf8mb4 COLLATE=utf8mb4_unicode_ci;
+
+CREATE TABLE `pattern` (
+  `centre_id` binary(16) NOT NULL,
+  `code` varchar(40) CHARACTER SET utf8mb4 COLLATE utf8mb4_nopad_bin NOT NULL,
+  `name` varchar(60) NOT NULL,
+  `created_at` datetime(3) NOT NULL,
+  PRIMARY KEY (`centre_id`,`code`)
+) ENGINE=InnoDB DEFAULT CHARSET=utf8mb4 COLLATE=utf8mb4_unicode_ci;
+
+CREATE TABLE `pattern_revision` (
+  `centre_id` binary(16) NOT NULL,
+  `code` varchar(40) CHARACTER SET utf8mb4 COLLATE utf8mb4_nopad_bin NOT NULL,
+  `revision` int(10) unsigned NOT NULL,
+  `body` longtext CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL CHECK (json_valid(`body`)),
+  `note` varchar(300) DEFAULT NULL,
+  `written_by` varchar(80) NOT NULL,
+  `written_at` datetime(3) NOT NULL,
+  PRIMARY KEY (`centre_id`,`code`,`revision`)
 ) ENGINE=InnoDB DEFAULT CHARSET=utf8mb4 COLLATE=utf8mb4_unicode_ci;
 
 CREATE TABLE `quarter_counter` (
