@@ -30,6 +30,8 @@ export interface Accounts {
   addMembership(given: { user: string; centre: Pick<CentreRef, 'id'>; role: MemberRole; leagues?: readonly string[] }): Promise<void>;
   /** A link that opens the wall; `path` holds its token and is returned only here. */
   createDisplayLink(given: { centre: CentreRef; name: string; by: string }): Promise<{ id: string; path: string }>;
+  /** Addresses of those who have one of these roles in a centre: who gets its mails. */
+  emails(centre: Pick<CentreRef, 'id'>, roles: readonly MemberRole[]): Promise<string[]>;
   /** Calls back with the handle of each sign-in or link that ends before its time; returns how to stop listening. */
   onRevoked(listener: (handle: string) => void): () => void;
   /** Stops the timers of the sign-in limits. */
@@ -64,6 +66,7 @@ export function createAccounts(deps: Pick<Deps, 'db' | 'clock' | 'log' | 'config
       const { display, path } = await displays.add(centre, name, by);
       return { id: display.id, path };
     },
+    emails: (centre, roles) => readModel.emails(centre.id, roles),
     onRevoked(listener) {
       listeners.add(listener);
       return () => listeners.delete(listener);

@@ -36,6 +36,12 @@ export function accountReadModel(db: Knex) {
       return { identity: { kind: 'display', id: fromBinary(row.id), name: row.name, email: null, centres: [centre] }, seenAt: fromRowTime(row.seen_at) };
     },
 
+    /** Addresses of those who have one of these roles in a centre. */
+    async emails(centre: Buffer, roles: readonly MemberRole[]): Promise<string[]> {
+      const rows = await db('membership as m').join('user as u', 'u.id', 'm.user_id').where('m.centre_id', centre).whereIn('m.role', roles).orderBy('u.email').select<{ email: string }[]>('u.email');
+      return rows.map((row) => row.email);
+    },
+
     async people(centre: Buffer): Promise<Person[]> {
       const rows = await db('membership as m')
         .join('user as u', 'u.id', 'm.user_id')

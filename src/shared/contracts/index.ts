@@ -1,4 +1,5 @@
 import { accountContracts } from './accounts.ts';
+import { apiContracts } from './api.ts';
 import { callContracts } from './calls.ts';
 import { centreContracts } from './centre.ts';
 import type { Contract } from './contract.ts';
@@ -12,6 +13,7 @@ import { runContracts } from './runs.ts';
 /** Every route there is, slice by slice. A test fails when a contract file isn't here, or a contract isn't mounted. */
 export const contractsOfSlices: Readonly<Record<string, Readonly<Record<string, Contract>>>> = {
   accounts: accountContracts,
+  api: apiContracts,
   calls: callContracts,
   centre: centreContracts,
   floor: floorContracts,
