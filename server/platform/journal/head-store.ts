@@ -87,3 +87,8 @@ export async function readOutbox(db: Knex, centre: Buffer, after: number): Promi
   const rows = (await db('outbox').where({ centre_id: centre }).where('seq', '>', after).orderBy('seq').limit(2000));
   return rows.map((row) => ({ seq: row.seq, lanes: row.lanes, topics: row.topics as Topic[] }));
 }
+
+/** Removes outbox rows that were written before an instant. */
+export async function sweepOutbox(db: Knex, before: number): Promise<void> {
+  await db('outbox').where('written_at', '<', new Date(before)).delete();
+}
