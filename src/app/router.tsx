@@ -12,9 +12,11 @@ function page<M, K extends keyof M>(load: () => Promise<M>, name: K) {
   return lazy(async () => ({ default: (await load())[name] as ComponentType }));
 }
 
+const SignInPage = page(() => import('../features/accounts/index.ts'), 'SignInPage');
 const calls = () => import('../features/calls/index.ts');
 const CallsPage = page(calls, 'CallsPage');
 const CallPage = page(calls, 'CallPage');
+const NumbersPage = page(() => import('../features/numbers/index.ts'), 'NumbersPage');
 
 export function Router() {
   return (
@@ -22,6 +24,7 @@ export function Router() {
       <Suspense fallback={<div className="p-8"><Skeleton label={wording.loading} /></div>}>
         <Routes>
           <Route path="/" element={<Home />} />
+          <Route path="/sign-in" element={<SignInPage />} />
           <Route path="/:centre/wall" element={<CentreLayout bare />}>
             <Route index element={<WallPage />} />
           </Route>
@@ -30,6 +33,7 @@ export function Router() {
             <Route path="floor" element={<FloorPage />} />
             <Route path="calls" element={<CallsPage />} />
             <Route path="calls/:call" element={<CallPage />} />
+            <Route path="numbers/:date?" element={<NumbersPage />} />
             <Route path="*" element={<NotFound />} />
           </Route>
           <Route path="*" element={<NotFound />} />

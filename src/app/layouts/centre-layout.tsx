@@ -19,7 +19,12 @@ import { AwayBanner } from './away-banner.tsx';
 import { Header } from './header.tsx';
 import { TabBar } from './tab-bar.tsx';
 
-const CallAlerts = lazy(() => import('../../features/calls/index.ts').then((m) => ({ default: m.CallAlerts })));
+/** Sound and notification of calls: fetched once the first screen stands, so that it doesn't wait for them. */
+const ALERTS_AFTER_MS = 1500;
+const CallAlerts = lazy(async () => {
+  await new Promise((done) => setTimeout(done, ALERTS_AFTER_MS));
+  return { default: (await import('../../features/calls/index.ts')).CallAlerts };
+});
 
 /** Who looks, and at which of their centres; sends to the sign-in page, or says that nothing is there. */
 function useCentreHere(): { here: CentreHere; me: Identity } | 'loading' | 'sign-in' | 'not-found' {

@@ -1,21 +1,23 @@
 import './floor.css';
-import { useRef, useState } from 'react';
+import { lazy, Suspense, useEffect, useRef, useState } from 'react';
 import { floorWords } from '#shared/text/en/floor-page.ts';
 import { useCentre } from '../../lib/centre.ts';
-import { useKeys } from '../../lib/keyboard.ts';
 import { useMedia } from '../../lib/media.ts';
 import { Skeleton } from '../../ui/page.tsx';
-import { useBoard, useLane } from './board-context.ts';
+import { useBoard } from './board-context.ts';
 import { FloorKey } from './components/floor-key.tsx';
 import { KeysHelp } from './components/keys-help.tsx';
-import type { LaneMode } from './components/lane-acts.tsx';
-import { LanePanel, useLaneMode } from './components/lane-panel.tsx';
 import { NightLine } from './components/night-line.tsx';
-import { PhoneFloor } from './components/phone-floor.tsx';
 import { Plan } from './components/plan.tsx';
 import { Side } from './components/side.tsx';
-import { useLaneAct } from './mutations.ts';
-import { type Selection, useLaneSelection } from './use-lane-selection.ts';
+import { useFloorKeys } from './use-floor-keys.ts';
+import { type LaneMode, type Selection, useLaneMode, useLaneSelection } from './use-lane-selection.ts';
+
+/** What isn't there at first sight is fetched after it: the panel when the page rests, the turned plan on a phone. */
+const panelCode = () => import('./components/lane-panel.tsx');
+const LanePanel = lazy(() => panelCode().then((m) => ({ default: m.LanePanel })));
+const PhoneFloor = lazy(() => import('./components/phone-floor.tsx').then((m) => ({ default: m.PhoneFloor })));
+const REST_MS = 2500;
 
 /** Below this width the plan turns a quarter: lanes become rows. */
 const TURNED = '(max-width: 899.98px)';
@@ -29,9 +31,23 @@ export function FloorPage() {
   const [mode, setMode] = useLaneMode(selection.lane);
   const callAddress = may('call.see') ? (call: string) => `/${slug}/calls/${call}` : null;
   const sessionAddress = may('readiness.see') ? (session: string) => `/${slug}/readiness/${session}` : null;
+  useEffect(() => {
+    const timer = setTimeout(() => void panelCode(), REST_MS);
+    return () => clearTimeout(timer);
+  }, []);
   if (!centre) return <div className="p-6"><Skeleton lines={8} label={floorWords.loading} /></div>;
-  const panel = selection.lane === null ? null : <LanePanel lane={selection.lane} mode={mode} onMode={setMode} onLeave={() => selection.select(null)} callAddress={callAddress} />;
-  if (turned) return <PhoneFloor selection={selection} panel={panel} callAddress={callAddress} sessionAddress={sessionAddress} />;
+  const panel = selection.lane === null ? null : (
+    <Suspense fallback={<Skeleton lines={5} label={floorWords.loading} />}>
+      <LanePanel lane={selection.lane} mode={mode} onMode={setMode} onLeave={() => selection.select(null)} callAddress={callAddress} />
+    </Suspense>
+  );
+  if (turned) {
+    return (
+      <Suspense fallback={<div className="p-4"><Skeleton lines={8} label={floorWords.loading} /></div>}>
+        <PhoneFloor selection={selection} panel={panel} callAddress={callAddress} sessionAddress={sessionAddress} />
+      </Suspense>
+    );
+  }
   return <Desk selection={selection} mode={mode} onMode={setMode} panel={panel} callAddress={callAddress} sessionAddress={sessionAddress} lanes={centre.lanes} />;
 }
 
@@ -60,54 +76,4 @@ function Desk({ selection, mode, onMode, panel, callAddress, sessionAddress, lan
       <KeysHelp open={help} onClose={() => setHelp(false)} />
     </div>
   );
-}
-
-interface KeysInput {
-  selection: Selection;
-  mode: LaneMode;
-  onMode: (mode: LaneMode) => void;
-  lanes: number;
-  onHelp: () => void;
-  onSearch: () => void;
-}
-
-function useFloorKeys({ selection, mode, onMode, lanes, onHelp, onSearch }: KeysInput): void {
-  const { slug, may } = useCentre();
-  const view = useLane(selection.lane ?? 0);
-  const act = useLaneAct(slug);
-  const step = (by: number): boolean => {
-    const next = (selection.lane ?? 0) + by;
-    if (selection.lane !== null && next >= 1 && next <= lanes) selection.select(next);
-    return selection.lane !== null;
-  };
-  const leave = (): boolean => {
-    const lane = selection.lane;
-    if (lane === null) return false;
-    if (mode !== 'none') onMode('none');
-    else {
-      selection.select(null);
-      document.querySelector<HTMLElement>(`.strip[data-lane="${lane}"]`)?.focus({ preventScroll: true });
-    }
-    return true;
-  };
-  const onLane = (next: LaneMode, allowed: boolean): boolean => {
-    if (view && allowed) onMode(next);
-    return view !== null;
-  };
-  useKeys((key) => {
-    if (selection.type(key)) return true;
-    switch (key) {
-      case 'Escape': return leave();
-      case '?': onHelp(); return true;
-      case '/': onSearch(); return true;
-      case 'ArrowLeft': return step(-1);
-      case 'ArrowRight': return step(1);
-      case 'c': return onLane('call', may('call.raise'));
-      case 'm': return onLane('move', may('lane.operate') && view?.use !== null);
-      case 'o':
-        if (view?.use && may('lane.operate')) act.mutate({ act: 'close', lane: view.lane, was: view.use });
-        return view?.use ? true : onLane('open', may('lane.operate'));
-      default: return false;
-    }
-  });
 }

@@ -7,7 +7,6 @@ import { equipmentNames, safetyNames } from '#shared/text/en/calls.ts';
 import { lanesText } from '#shared/text/en/formats.ts';
 import { laneWords } from '#shared/text/en/floor-page.ts';
 import { call, newKey } from '../../lib/api.ts';
-import { sentenceOf } from '../../lib/refusal.ts';
 import { showToast } from '../../ui/toast.tsx';
 
 export type LaneAct =
@@ -83,6 +82,7 @@ async function undo(centre: string, act: LaneAct): Promise<void> {
     await send(centre, act);
     showToast(doneText(act));
   } catch (error) {
+    const { sentenceOf } = await import('../../lib/refusal.ts');
     showToast(sentenceOf(error) ?? '');
   }
 }

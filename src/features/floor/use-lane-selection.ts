@@ -37,3 +37,12 @@ export function useLaneSelection(lanes: number): Selection {
   };
   return { lane, typed, select, type };
 }
+
+/** What is being done with the selected lane: the form that stands open. */
+export type LaneMode = 'none' | 'open' | 'move' | 'call' | 'out';
+
+/** Kept by the page, as keys work anywhere on the floor; another lane begins with none. */
+export function useLaneMode(lane: number | null): [LaneMode, (mode: LaneMode) => void] {
+  const [state, setState] = useState<{ lane: number | null; mode: LaneMode }>({ lane, mode: 'none' });
+  return [state.lane === lane ? state.mode : 'none', (mode) => setState({ lane, mode })];
+}

@@ -10,8 +10,8 @@ import { Refused } from '../../../ui/banner.tsx';
 import { Button } from '../../../ui/button.tsx';
 import { Field, Input, Select } from '../../../ui/field.tsx';
 import { type LaneAct, useLaneAct } from '../mutations.ts';
+import type { LaneMode } from '../use-lane-selection.ts';
 
-export type LaneMode = 'none' | 'open' | 'move' | 'call' | 'out';
 
 interface Props {
   view: LaneView;

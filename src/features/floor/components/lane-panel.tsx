@@ -1,4 +1,4 @@
-import { useEffect, useRef, useState } from 'react';
+import { useEffect, useRef } from 'react';
 import { Link } from 'react-router-dom';
 import type { LaneView } from '#shared/contracts/floor.ts';
 import { useNames } from '#shared/text/en/calls.ts';
@@ -11,7 +11,8 @@ import { IconButton } from '../../../ui/button.tsx';
 import { LaneBadge } from '../../../ui/marks.tsx';
 import { useLane } from '../board-context.ts';
 import { markOf } from '../lane-mark.ts';
-import { type LaneMode, LaneActs } from './lane-acts.tsx';
+import type { LaneMode } from '../use-lane-selection.ts';
+import { LaneActs } from './lane-acts.tsx';
 
 interface Props {
   lane: number;
@@ -108,10 +109,4 @@ function LaneFacts({ view }: { view: LaneView }) {
       ))}
     </dl>
   );
-}
-
-/** The mode that a key or button opens; kept by the page, as keys work anywhere on the floor. */
-export function useLaneMode(lane: number | null): [LaneMode, (mode: LaneMode) => void] {
-  const [state, setState] = useState<{ lane: number | null; mode: LaneMode }>({ lane, mode: 'none' });
-  return [state.lane === lane ? state.mode : 'none', (mode) => setState({ lane, mode })];
 }

@@ -4,7 +4,7 @@ import { Sheet } from '../../../ui/dialog.tsx';
 /** The lane's panel from below, on a phone. Its code is fetched with the first lane selected. */
 export function LaneSheet({ title, onClose, children }: { title: string; onClose: () => void; children: ReactNode }) {
   return (
-    <Sheet open onClose={onClose} title={title}>
+    <Sheet open onClose={onClose} title={title} ownHeader>
       {children}
     </Sheet>
   );
