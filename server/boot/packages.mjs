@@ -55,7 +55,7 @@ export async function ensureModules({ tell = say } = {}) {
       const found = read(STAMP);
       if (found === wanted) return;
       if (!sameKind(found, wanted) || !isInstalled()) {
-        await step('Installing the packages of package-lock.json (npm ci)', 'npm', ['ci', '--include=dev', '--no-audit', '--no-fund'], { env: withoutNpm(), stdio: ['ignore', 2, 2], tell });
+        await step('Installing the packages of package-lock.json (npm ci)', 'npm', ['ci', '--include=dev', '--prefer-offline', '--no-audit', '--no-fund'], { env: withoutNpm(), stdio: ['ignore', 2, 2], tell });
       }
       fs.writeFileSync(STAMP, wanted);
     },
