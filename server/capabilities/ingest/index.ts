@@ -10,6 +10,7 @@ import { INGEST_RATE, type Rate } from './token-bucket.ts';
 
 export { INGEST_PATH } from './door.ts';
 export type { Ingest, IngestAnswer, Report } from './ingest.ts';
+export type { Rate } from './token-bucket.ts';
 
 export interface IngestSlice {
   routes: Route[];
