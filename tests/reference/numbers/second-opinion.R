@@ -76,6 +76,18 @@ add("quantiles", sprintf("{ values: %s, at: %s }", vec(values), rows(cbind(ps, q
 xs <- c(1e-3, 0.1, 0.5, 1, 1.5, 7, 11.9, 12, 100, 1e6)
 add("digamma", rows(cbind(xs, digamma(xs))))
 
+# Large arguments. Gamma: shape, x, lower, upper tail. Quantiles: p, shape, value. Poisson: k, mean, cdf. Limits: count, low, high at 95 %.
+shape <- rep(c(150, 990, 1063.919, 1119.5, 2161, 5000, 12345.6, 30000), each = 7); x <- shape + rep(c(-5, -1.5, -0.3, 0, 0.4, 1.5, 5), 8) * sqrt(shape)
+add("largeGamma", rows(cbind(shape, x, pgamma(x, shape), pgamma(x, shape, lower.tail = FALSE))))
+g <- expand.grid(p = c(1e-6, 0.001, 0.025, 0.4, 0.975, 0.999), a = c(799, 801, 1050, 2200, 9000, 40000))
+add("largeQuantiles", rows(cbind(g$p, g$a, qgamma(g$p, g$a))))
+k <- c(1058, 1116, 940, 1500, 3000, 9800); m <- c(1010.958, 1067.882, 1001, 1520.5, 3100, 10000)
+add("largePoisson", rows(cbind(k, m, ppois(k, m))))
+q <- expand.grid(p = c(0.001, 0.025, 0.975, 0.999), m = c(790, 810, 999, 1500.5, 20000))
+add("largePoissonQuantiles", rows(cbind(q$p, q$m, qpois(q$p, q$m))))
+n <- c(500, 999, 1063, 2161, 5000, 20000)
+add("largeLimits", rows(t(sapply(n, function(i) c(i, poisson.test(i)$conf.int)))))
+
 writeLines(c("/** Results of another program, stored with its version; written by second-opinion.R, not by hand. */",
   "export const secondOpinion = {",
   sprintf("  versions: 'R %s, survival %s',", paste(R.version$major, R.version$minor, sep = "."), packageVersion("survival")),

@@ -1,4 +1,4 @@
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { poissonPmf } from '#shared/domain/numbers/distributions.ts';
 import { fitGammaPoisson, shrunkRanking } from '#shared/domain/numbers/gamma-poisson.ts';
 import { kaplanMeier, survivalAt, type SurvivalStep } from '#shared/domain/numbers/kaplan-meier.ts';
@@ -10,6 +10,8 @@ import { stratifiedRatio } from '#shared/domain/numbers/strata.ts';
 import { compareRates } from '#shared/domain/numbers/two-rates.ts';
 import { fitWeibull, weibullAge, weibullMean, weibullSurvival } from '#shared/domain/numbers/weibull.ts';
 import { random, share } from './random.ts';
+
+vi.setConfig({ testTimeout: 60_000 });
 
 /** Exact intervals must cover at least as often as they say, up to three standard errors of the simulation. */
 const atLeast = (result: { share: number; error: number }, nominal: number): void => expect(result.share).toBeGreaterThanOrEqual(nominal - 3 * result.error);

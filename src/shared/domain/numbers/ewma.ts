@@ -29,7 +29,9 @@ export function ewmaRateChart(counts: readonly number[], exposures: readonly num
   exposures.forEach((exposure) => demandAmount('exposure', exposure));
   const values = counts.map((count, i) => (exposures[i] === 0 ? null : count / (exposures[i] as number)));
   const variances = exposures.map((exposure) => (exposure === 0 ? 0 : rate / exposure));
-  return smooth(values, variances, rate, options).map((point) => ({ ...point, low: Math.max(0, point.low) }));
+  const points = smooth(values, variances, rate, options);
+  for (const point of points) point.low = Math.max(0, point.low);
+  return points;
 }
 
 function smooth(values: readonly (number | null)[], variances: readonly number[], centre: number, options: EwmaOptions): EwmaPoint[] {
@@ -38,10 +40,11 @@ function smooth(values: readonly (number | null)[], variances: readonly number[]
   demandPositive('width', width);
   let z = centre;
   let variance = 0;
+  const [fresh, kept] = [weight * weight, (1 - weight) * (1 - weight)];
   return values.map((value, i) => {
     if (value !== null) {
       z = weight * value + (1 - weight) * z;
-      variance = weight * weight * (variances[i] as number) + (1 - weight) ** 2 * variance;
+      variance = fresh * (variances[i] as number) + kept * variance;
     }
     const half = width * Math.sqrt(variance);
     return { z, low: centre - half, high: centre + half, outside: z > centre + half ? 'above' : z < centre - half ? 'below' : null };

@@ -9,6 +9,7 @@ export function findRoot(f: (x: number) => number, from: number, to: number): nu
   if (fa === 0) return a;
   if (fb === 0) return b;
   if (!(fa * fb < 0)) throw new RangeError('the signs at both ends must differ');
+  let last = Number.NaN;
   for (let step = 0; step < 200; step += 1) {
     const middle = a + (b - a) / 2;
     const fm = f(middle);
@@ -16,7 +17,8 @@ export function findRoot(f: (x: number) => number, from: number, to: number): nu
     if (fm === 0 || root === 0) return middle;
     const x = middle + ((middle - a) * Math.sign(fa - fb) * fm) / root;
     const fx = f(x);
-    if (fx === 0) return x;
+    if (fx === 0 || Math.abs(x - last) <= 2 * Number.EPSILON * Math.abs(x)) return x;
+    last = x;
     const before = b - a;
     if (fm * fx < 0) [a, fa, b, fb] = middle < x ? [middle, fm, x, fx] : [x, fx, middle, fm];
     else if (fa * fx < 0) [b, fb] = [x, fx];

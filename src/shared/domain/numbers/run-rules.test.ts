@@ -29,6 +29,8 @@ describe('Nelson’s rules', () => {
     expect(nelsonRules[1]([3, -3, 3.0001])).toEqual([2]);
     expect(nelsonRules[5]([2, 2, 2])).toEqual([]);
     expect(nelsonRules[6]([1, 1, 1, 1, 1])).toEqual([]);
+    expect(nelsonRules[7](minimal[7].map((value, i) => (i === 4 ? 1 : value)))).toEqual([]);
+    expect(nelsonRules[8](minimal[8].map((value, i) => (i === 4 ? -1 : value)))).toEqual([]);
     expect(nelsonRules[2]([1, 1, 1, 1, 0, 1, 1, 1, 1])).toEqual([]);
     expect(nelsonRules[3]([1, 2, 3, 3, 4, 5, 6])).toEqual([]);
   });

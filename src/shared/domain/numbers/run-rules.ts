@@ -4,11 +4,14 @@ export type RunRule = (z: readonly number[]) => number[];
 /** Places at which at least `need` of the last `span` values satisfy the condition. */
 function windows(z: readonly number[], span: number, need: number, holds: (value: number) => boolean): number[] {
   const places: number[] = [];
+  const recent = new Uint8Array(span);
   let inside = 0;
-  for (let i = 0; i < z.length; i += 1) {
-    if (holds(z[i] as number)) inside += 1;
-    if (i >= span && holds(z[i - span] as number)) inside -= 1;
-    if (i >= span - 1 && inside >= need) places.push(i);
+  for (let i = 0, slot = 0; i < z.length; i += 1) {
+    const now = holds(z[i] as number) ? 1 : 0;
+    inside += now - (recent[slot] as number);
+    recent[slot] = now;
+    slot = slot + 1 === span ? 0 : slot + 1;
+    if (inside >= need && i >= span - 1) places.push(i);
   }
   return places;
 }

@@ -33,6 +33,11 @@ describe('compareRates', () => {
     );
   });
 
+  it('counts the mirror image of an outcome as no likelier: 3 against 7 in equal frames', () => {
+    expect(compare(3, 500, 7, 500).twoSided).toBeCloseTo(2 * (176 / 1024), 12);
+    expect(compare(7, 500, 3, 500).twoSided).toBeCloseTo(2 * (176 / 1024), 12);
+  });
+
   it('turns round when the sides change places', () => {
     fc.assert(
       fc.property(count, frames, count, frames, (a, b, c, d) => {

@@ -35,6 +35,7 @@ export function compareRates(first: CountedFrames, second: CountedFrames, level 
   const n = x + second.count;
   if (n === 0) return missing('no-events');
   const share = first.frames / (first.frames + second.frames);
+  const rest = second.frames / (first.frames + second.frames);
   const scale = second.frames / first.frames;
   const tail = (1 - level) / 2;
   const low = x === 0 ? 0 : betaQuantile(tail, x, n - x + 1);
@@ -43,25 +44,25 @@ export function compareRates(first: CountedFrames, second: CountedFrames, level 
     ratio: second.count === 0 ? null : (x / second.count) * scale,
     low: (low / (1 - low)) * scale,
     high: high === null ? null : (high / (1 - high)) * scale,
-    twoSided: minimumLikelihood(x, n, share),
+    twoSided: minimumLikelihood(x, n, share, rest),
     lower: binomialCdf(x, n, share),
-    higher: binomialTail(x, n, share),
+    higher: binomialTail(x, n, share, rest),
   };
 }
 
 /** Probability of every outcome no likelier than x (with the customary slack of 1e-7 for rounding). */
-function minimumLikelihood(x: number, n: number, share: number): number {
+function minimumLikelihood(x: number, n: number, share: number, rest: number): number {
   const mean = n * share;
   if (x === mean) return 1;
   const bar = binomialPmf(x, n, share) * (1 + 1e-7);
   if (x < mean) {
     // Above the mean the probabilities fall: the first that is small enough begins the far tail.
     const from = firstTrue(Math.ceil(mean), n + 1, (i) => binomialPmf(i, n, share) <= bar);
-    return Math.min(1, binomialCdf(x, n, share) + binomialTail(from, n, share));
+    return Math.min(1, binomialCdf(x, n, share) + binomialTail(from, n, share, rest));
   }
   // Below the mean they rise: everything before the first that is too likely belongs to the far tail.
   const until = firstTrue(0, Math.floor(mean) + 1, (i) => binomialPmf(i, n, share) > bar);
-  return Math.min(1, binomialTail(x, n, share) + binomialCdf(until - 1, n, share));
+  return Math.min(1, binomialTail(x, n, share, rest) + binomialCdf(until - 1, n, share));
 }
 
 /** The first whole number in [from, end) for which a condition that stays true holds; `end` if none. */
