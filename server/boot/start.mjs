@@ -69,6 +69,10 @@ async function catchMail(settings, env, log) {
 
 async function startServer(env, log) {
   const waiting = setInterval(() => say(`Waiting for the server (${Math.round(process.uptime())} s so far)`), STILL_WAITING_MS);
+  const tell = (text) => {
+    waiting.refresh(); // whoever reads knows that it works
+    say(text);
+  };
   let server;
   const ready = new Promise((resolve, reject) => {
     server = keepRunning({
@@ -77,7 +81,7 @@ async function startServer(env, log) {
       env,
       output: log.fd,
       onMessage: (message) => {
-        if (message?.type === 'say') say(String(message.text));
+        if (message?.type === 'say') tell(String(message.text));
         if (message?.type === 'ready') resolve();
       },
       onFirstExit: (how) => reject(new StopError(`The server didn't start (${how}).${log.file ? ` The end of ${log.file}:\n${endOfLog(log.file)}` : ''}`)),
