@@ -5,19 +5,20 @@ import type { Answer } from '#tests/support/ask.ts';
 import { callsHouse, type CallsHouse, refusal, seen } from '#tests/support/calls-house.ts';
 import { fixedClock } from '#tests/support/clock.ts';
 import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
+import { startServer, type TestServer } from '#tests/support/server.ts';
 
 const SECOND = 1000;
 const clock = fixedClock('2026-05-14T17:39:00Z');
 let database: TestDatabase;
-let server: CallsHouse;
-let h: Awaited<ReturnType<CallsHouse['house']>>;
+let server: TestServer;
+let h: CallsHouse;
 let call: CallDetail;
 let lane = -1;
 
 beforeAll(async () => {
   database = await freshDatabase();
-  server = await callsHouse(database, clock);
-  h = await server.house({ lanes: 40 });
+  server = await startServer({ db: database.db, clock });
+  h = await callsHouse(server, { lanes: 40 });
 });
 afterAll(async () => {
   await server.close();

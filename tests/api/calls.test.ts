@@ -3,17 +3,18 @@ import type { CallDetail } from '#shared/contracts/calls.ts';
 import { callsHouse, type CallsHouse, refusal, seen } from '#tests/support/calls-house.ts';
 import { fixedClock } from '#tests/support/clock.ts';
 import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
+import { startServer, type TestServer } from '#tests/support/server.ts';
 
 const MINUTE = 60_000;
 const clock = fixedClock('2026-05-14T17:39:00Z');
 let database: TestDatabase;
-let server: CallsHouse;
-let h: Awaited<ReturnType<CallsHouse['house']>>;
+let server: TestServer;
+let h: CallsHouse;
 
 beforeAll(async () => {
   database = await freshDatabase();
-  server = await callsHouse(database, clock);
-  h = await server.house({ lanes: 80 });
+  server = await startServer({ db: database.db, clock });
+  h = await callsHouse(server, { lanes: 80 });
 });
 afterAll(async () => {
   await server.close();
@@ -31,7 +32,6 @@ const factsOf = async (type: string, call: { id: string }): Promise<number> => {
   const [row] = await database.db('journal').where({ centre_id: h.centre.id, type }).whereRaw("json_value(data, '$.call') = ?", [call.id]).count({ n: '*' });
   return Number(row?.['n']);
 };
-const openOn = async (lane: number): Promise<CallDetail[]> => ((await h.get(h.desk)).body as { open: CallDetail[] }).open.filter((call) => call.lanesHeld.includes(lane));
 
 describe('the life of a call', () => {
   it('goes from a stop to back running, every step with who and when', async () => {
@@ -45,7 +45,7 @@ describe('the life of a call', () => {
     const closed = seen(await h.post(h.mechanic, `/${call.id}/clear`, { cause: 'deck.pin-off-spot', note: 'respotted' }));
     expect(closed).toMatchObject({ status: 'closed', cleared: { at: clock.now(), by: h.mechanic.name, cause: 'deck.pin-off-spot', note: 'respotted' } });
     expect(closed.steps.map((step) => [step.kind, step.by])).toEqual([
-      ['raised', 'Back end'], ['acknowledged', h.mechanic.name], ['on-lane', h.mechanic.name], ['cleared', h.mechanic.name],
+      ['raised', expect.stringMatching(/^Gateway \d+$/)], ['acknowledged', h.mechanic.name], ['on-lane', h.mechanic.name], ['cleared', h.mechanic.name],
     ]);
     const list = (await h.get(h.desk)).body as { open: unknown[]; closed: object[]; lanes: number };
     expect(list).toMatchObject({ open: [], lanes: 80, closed: [{ id: call.id, cause: 'deck.pin-off-spot', closedBy: h.mechanic.name, downMs: 3 * MINUTE }] });
@@ -134,14 +134,14 @@ describe('one open call for a place and its equipment', () => {
     const second = seen(await h.post(h.desk, '', { lane: lane + 1, equipment: 'ball-lift' }));
     expect(first).toMatchObject({ scope: 'pair', lanesHeld: [lane, lane + 1], neighbour: { lane: lane + 1 } });
     expect(second.id).toBe(first.id);
-    expect(await openOn(lane)).toHaveLength(1);
+    expect(await h.openOn(lane)).toHaveLength(1);
   });
 
   it('keeps other equipment of the same lane apart', async () => {
     const lane = freshPair();
     await h.post(h.desk, '', { lane, equipment: 'foul-unit' });
     await h.post(h.desk, '', { lane, equipment: 'scoring' });
-    expect(await openOn(lane)).toHaveLength(2);
+    expect(await h.openOn(lane)).toHaveLength(2);
   });
 
   it('is a new call after the last one was closed', async () => {
@@ -190,7 +190,7 @@ describe('what is refused', () => {
   it('a call that isn’t there, or is another house’s', async () => {
     const call = await h.stop(freshPair());
     expect(refusal(await h.post(h.mechanic, '/018f0000-0000-7000-8000-000000000000/acknowledge'))).toMatchObject({ status: 404, code: 'call.unknown' });
-    const elsewhere = await server.house();
+    const elsewhere = await callsHouse(server);
     expect(refusal(await elsewhere.post(elsewhere.mechanic, `/${call.id}/acknowledge`))).toMatchObject({ status: 404, code: 'call.unknown' });
     expect((await elsewhere.get(elsewhere.desk, `/${call.id}`)).status).toBe(404);
   });
@@ -219,7 +219,7 @@ describe('history of a lane', () => {
   let others: typeof h;
   beforeAll(async () => {
     others = h;
-    h = await server.house();
+    h = await callsHouse(server);
   });
   afterAll(() => {
     h = others;

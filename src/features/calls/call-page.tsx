@@ -11,7 +11,7 @@ import { sentenceOf } from '../../lib/refusal.ts';
 import { Button, buttonLook } from '../../ui/button.tsx';
 import { Page, Skeleton } from '../../ui/page.tsx';
 import type { QueuedAction } from './action-queue.ts';
-import { CallBar } from './components/call-bar.tsx';
+import { CallBar, RarerActions } from './components/call-bar.tsx';
 import { CallFactsPart, CallLife, Cautions } from './components/call-facts.tsx';
 import { CallHead } from './components/call-head.tsx';
 import { CauseSheet } from './components/cause-sheet.tsx';
@@ -50,6 +50,7 @@ function CallScreen({ shown }: { shown: CallDetail }) {
   const [sheet, setSheet] = useState<SheetName | null>(null);
   const queued = actions.waiting.filter((action) => action.call === shown.id);
   const call = me ? withQueued(shown, queued, me) : shown;
+  const busy = queued.length > 0 && !actions.away;
   const works = may('call.work');
   const offers = offersFor(call, { id: me?.id ?? null, works, answers: may('call.answer'), manages: role === 'manager' });
   const act = (kind: QueuedAction['kind'], body: QueuedAction['body'] = null) => actions.act(shown.id, kind, body);
@@ -69,11 +70,12 @@ function CallScreen({ shown }: { shown: CallDetail }) {
         <CallFactsPart call={call} />
         <Cautions call={call} />
         <LockoutRecord call={call} mine={call.lockout?.byId === me?.id} works={works} act={act} />
+        <RarerActions offers={offers.more} onPress={press} busy={busy} />
         <div className="mt-8 pb-6 min-[901px]:hidden">
           <CallLife call={call} />
         </div>
         <div className="grow" />
-        <CallBar offers={offers} onPress={press} busy={queued.length > 0 && !actions.away} />
+        <CallBar offers={offers} onPress={press} busy={busy} />
       </article>
       <aside className="border-l border-rule bg-card px-6 py-6 max-[900px]:hidden">
         <CallLife call={call} />

@@ -66,8 +66,9 @@ function Aside({ lanes, raise }: { lanes: number; raise: boolean }) {
     <div className="flex flex-col gap-8">
       {raise ? (
         <section className="max-[900px]:hidden">
-          <PartTitle note={callsText.raiseLead}>{callsText.raise}</PartTitle>
+          <PartTitle>{callsText.raise}</PartTitle>
           <div className="border-t border-rule pt-3">
+            <p className="mb-3 text-dim">{callsText.raiseLead}</p>
             <RaiseForm lanes={lanes} />
           </div>
         </section>

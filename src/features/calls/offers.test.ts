@@ -39,7 +39,7 @@ describe('what comes next', () => {
     let call = withQueued(aCall({ status: 'on-lane', mechanic: odell, onLaneAt: T0 }), [press('lockoutBegin')], odell);
     const all = [...ISOLATION_STEPS.map((one) => one.code), ...RELEASE_STEPS];
     for (const step of all) {
-      expect(labels(call)).toMatchObject({ main: 'Back running', because: 'Finish the release steps first' });
+      expect(labels(call)).toMatchObject({ main: 'Back running', because: expect.stringMatching(/release steps/) as string });
       call = withQueued(call, [press('lockoutStep', { step, done: true })], odell);
     }
     expect(labels(call)).toMatchObject({ main: 'End the lockout record', because: null });

@@ -1,5 +1,5 @@
 import type { CallDetail } from '#shared/contracts/calls.ts';
-import { nothingRecorded, releaseRecorded } from '#shared/domain/calls/lockout-steps.ts';
+import { isolationRecorded, nothingRecorded, releaseRecorded } from '#shared/domain/calls/lockout-steps.ts';
 import { callsText, callText, lockoutText } from '#shared/text/en/calls-screen.ts';
 import type { ActionKind } from './action-queue.ts';
 
@@ -68,5 +68,5 @@ function inRecord(call: CallDetail, open: NonNullable<CallDetail['lockout']>, vi
   if (open.byId !== viewer.id) return { main: back(call, callText.firstReleaseOf(open.by)), second, more };
   if (releaseRecorded(open.steps)) return { main: offer(callText.endRecord, 'lockoutRelease'), second, more };
   if (nothingRecorded(open.steps) && call.status !== 'on-lane' && call.status !== 'out-of-service') return { main: offer(callText.onLane, 'onLane'), second, more };
-  return { main: back(call, callText.firstRelease), second, more };
+  return { main: back(call, isolationRecorded(open.steps) ? callText.firstRelease : callText.recordOpen), second, more };
 }

@@ -1,6 +1,6 @@
 import { Link } from 'react-router-dom';
 import type { CallView } from '#shared/contracts/floor.ts';
-import { callPlace, callTitle, statusNames } from '#shared/text/en/calls.ts';
+import { callLanes, callTitle, callWhere, statusNames } from '#shared/text/en/calls.ts';
 import { callsText } from '#shared/text/en/calls-screen.ts';
 import { useCentre } from '../../../lib/centre.ts';
 import { useTimes } from '../../../lib/formats.ts';
@@ -35,30 +35,30 @@ export function CallRow({ call, onMine, busy = false }: { call: CallView; onMine
   const { time } = useTimes();
   const standing = useStanding(call);
   const look = lookOf(call);
-  const said = [callPlace(call), call.playing, callsText.raisedBy(call.raisedBy, call.origin, time(call.raisedAt)), call.joined > 0 ? callsText.joinedTimes(call.joined) : null];
+  const said = [callWhere(call), call.playing, callsText.raisedBy(call.raisedBy, call.origin, time(call.raisedAt)), call.joined > 0 ? callsText.joinedTimes(call.joined) : null];
   const escalated = callsText.escalated[call.escalation];
   return (
-    <li className={classes('relative grid grid-cols-[auto_minmax(0,1fr)_auto] items-start gap-x-4 gap-y-3 border-t border-rule py-4', call.safety && call.status !== 'closed' && 'border-l-4 border-l-red pl-3')}>
-      <LaneBadge lane={call.scope === 'house' ? '–' : call.lane} tone={look.tone} size={26} />
-      <div className="min-w-0">
-        <h3 className="type-name text-[1.1875rem] leading-tight">
-          <Link to={`/${slug}/calls/${call.id}`} className="after:absolute after:inset-0">
-            {callTitle(call)}
-          </Link>
-        </h3>
-        <p className="mt-0.5 text-dim">{said.filter(Boolean).join(' · ')}</p>
-        {call.returnedAt !== null ? <p className="mt-0.5 font-[620]">{callsText.runsAgain}</p> : null}
+    <li className={classes('relative grid grid-cols-[auto_minmax(0,1fr)_auto] items-start gap-x-4 border-t border-rule py-4', call.safety && call.status !== 'closed' && 'border-l-4 border-l-red pl-3')}>
+      <LaneBadge lane={call.scope === 'house' ? '–' : call.lane} tone={look.tone} size={26} className="row-span-2" />
+      <h3 className="type-name min-w-0 text-[1.1875rem] leading-tight wrap-anywhere">
+        <Link to={`/${slug}/calls/${call.id}`} className="after:absolute after:inset-0">
+          {callTitle(call)}
+        </Link>
+      </h3>
+      <p className={classes('flex items-center justify-end gap-1.5', look.clock)}>
+        <Mark kind={look.mark} />
+        <RunningClock since={call.raisedAt} className="type-clock text-2xl" />
+      </p>
+      <div className="col-span-2 mt-0.5 min-[901px]:col-span-1">
+        <p className="text-dim">{said.filter(Boolean).join(' · ')}</p>
+        {call.returnedAt !== null ? <p className="font-[620]">{callsText.runsAgain}</p> : null}
       </div>
-      <div className="text-right">
-        <p className={classes('flex items-center justify-end gap-1.5', look.clock)}>
-          <Mark kind={look.mark} />
-          <RunningClock since={call.raisedAt} className="type-clock text-2xl" />
-        </p>
-        <p className="mt-1 max-w-36 text-sm text-dim">{standing}</p>
-        {escalated ? <p className="text-sm font-[650] text-red">{escalated}</p> : null}
-      </div>
+      <p className="col-span-2 col-start-2 mt-0.5 flex flex-wrap gap-x-3 min-[901px]:col-span-1 min-[901px]:col-start-3 min-[901px]:max-w-56 min-[901px]:justify-end min-[901px]:text-right">
+        <span className="font-[620]">{standing}</span>
+        {escalated ? <span className="font-[650] text-red">{escalated}</span> : null}
+      </p>
       {onMine ? (
-        <Button kind="primary" size="hand" busy={busy} className="relative col-span-3 min-[901px]:col-span-1 min-[901px]:col-start-2 min-[901px]:justify-self-start min-[901px]:px-8" onClick={onMine}>
+        <Button kind="primary" size="hand" busy={busy} aria-label={callsText.mineOf(callLanes(call))} className="relative col-span-3 mt-3 min-[901px]:col-span-1 min-[901px]:col-start-2 min-[901px]:justify-self-start min-[901px]:px-8" onClick={onMine}>
           {callsText.mine}
         </Button>
       ) : null}

@@ -1,3 +1,4 @@
+import { useState } from 'react';
 import type { CallDetail } from '#shared/contracts/calls.ts';
 import { ISOLATION_STEPS, isolationRecorded, mayRecord, nothingRecorded, RELEASE_STEPS } from '#shared/domain/calls/lockout-steps.ts';
 import { lockoutStepText } from '#shared/text/en/calls.ts';
@@ -12,11 +13,13 @@ type Act = (kind: ActionKind, body?: QueuedAction['body']) => void;
 /** Somebody reaches in: only then a record is asked for. It keeps the order of the steps; it isolates nothing. */
 export function LockoutRecord({ call, mine, works, act }: { call: CallDetail; mine: boolean; works: boolean; act: Act }) {
   const { time } = useTimes();
+  // Somebody thinks better of it half way: what was locked is given back by the release steps.
+  const [thoughtBetter, setThoughtBetter] = useState(false);
   const record = call.lockout;
   const open = record !== null && record.releasedAt === null;
   if (!open && (!works || call.status === 'closed')) return null;
   const inside = open && isolationRecorded(record.steps);
-  const releasing = open && (inside || RELEASE_STEPS.some((step) => record.steps[step] !== undefined));
+  const releasing = open && (inside || thoughtBetter || RELEASE_STEPS.some((step) => record.steps[step] !== undefined));
   return (
     <section className="mt-2">
       <div className="mb-1 flex flex-wrap items-baseline justify-between gap-x-3">
@@ -33,8 +36,8 @@ export function LockoutRecord({ call, mine, works, act }: { call: CallDetail; mi
           {lockoutText.begin}
         </Button>
       )}
-      {open && mine && nothingRecorded(record.steps) ? (
-        <Button kind="quiet" size="hand" className="mt-1 w-full" onClick={() => act('lockoutRelease')}>
+      {open && mine && (!releasing || nothingRecorded(record.steps)) ? (
+        <Button kind="quiet" size="hand" className="mt-1 w-full" onClick={() => (nothingRecorded(record.steps) ? act('lockoutRelease') : setThoughtBetter(true))}>
           {lockoutText.drop}
         </Button>
       ) : null}
@@ -59,7 +62,7 @@ function StepList({ call, steps, done, enabled, act }: { call: CallDetail; steps
               aria-checked={ticked}
               aria-disabled={off || undefined}
               onClick={() => (off ? undefined : act('lockoutStep', { step, done: !ticked }))}
-              className={classes('grid min-h-[3.25rem] w-full grid-cols-[auto_minmax(0,1fr)_auto] items-center gap-3 py-1 text-left text-[1.0625rem] font-[620]', off && !ticked && 'cursor-default text-dim')}
+              className={classes('grid min-h-[3.25rem] w-full scroll-mt-20 scroll-mb-56 grid-cols-[auto_minmax(0,1fr)_auto] items-center gap-3 py-1 text-left text-[1.0625rem] font-[620]', off && !ticked && 'cursor-default text-dim')}
             >
               <span aria-hidden className={classes('grid size-8 place-items-center rounded-md text-xl', ticked ? 'bg-ink text-paper' : 'ring-2 ring-inset', !ticked && (off ? 'ring-line' : 'ring-ink'))}>
                 {ticked ? '✓' : ''}
@@ -79,7 +82,7 @@ function Recorded({ call, done }: { call: CallDetail; done: Record<string, numbe
   const { time } = useTimes();
   return (
     <details className="mt-3">
-      <summary className="flex min-h-hand cursor-pointer items-center font-[620]">{lockoutText.before}</summary>
+      <summary className="cursor-pointer py-3.5 font-[620]">{lockoutText.before}</summary>
       <ul>
         {ISOLATION_STEPS.map((step) => (
           <li key={step.code} className="flex justify-between gap-3 border-t border-rule py-2">

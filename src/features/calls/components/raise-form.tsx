@@ -14,6 +14,16 @@ import { useRaise } from '../mutations.ts';
 
 const choice = 'min-h-11 rounded-md px-3 py-2 text-left font-[620] ring-1 ring-inset ring-line hover:bg-card disabled:opacity-45 disabled:cursor-not-allowed max-[900px]:min-h-hand';
 const TEXT_MAX = 300;
+/** What a desk is told of most; the rest is one press further. */
+const USUAL: readonly Equipment[] = ['pinsetter', 'ball-return', 'scoring', 'foul-unit', 'bumpers', 'console'];
+
+function What({ name, off, onPress }: { name: string; off: boolean; onPress: () => void }) {
+  return (
+    <button type="button" disabled={off} className={classes(choice, 'first-letter:uppercase')} onClick={onPress}>
+      {name}
+    </button>
+  );
+}
 
 /** A call in two taps: the lane, then what it is. What was said may be typed between. */
 export function RaiseForm({ lanes, lane: given = null, onRaised }: { lanes: number; lane?: number | null; onRaised?: (call: CallDetail) => void }) {
@@ -55,10 +65,8 @@ export function RaiseForm({ lanes, lane: given = null, onRaised }: { lanes: numb
       <fieldset disabled={off}>
         <legend className="mb-2 text-sm font-[620]">{callsText.what(lane)}</legend>
         <div className="grid grid-cols-2 gap-2">
-          {EQUIPMENT.map((equipment) => (
-            <button key={equipment} type="button" disabled={off} className={classes(choice, 'first-letter:uppercase', equipment === 'pinsetter' && 'col-span-2')} onClick={() => send({ equipment })}>
-              {equipmentNames[equipment]}
-            </button>
+          {USUAL.map((equipment) => (
+            <What key={equipment} name={equipmentNames[equipment]} off={off} onPress={() => send({ equipment })} />
           ))}
         </div>
         <p className="mt-5 mb-2 text-sm font-[700] text-red">{callsText.dangers}</p>
@@ -69,6 +77,14 @@ export function RaiseForm({ lanes, lane: given = null, onRaised }: { lanes: numb
             </button>
           ))}
         </div>
+        <details className="mt-3">
+          <summary className="flex min-h-11 cursor-pointer items-center font-[620] max-[900px]:min-h-hand">{callsText.otherEquipment}</summary>
+          <div className="grid grid-cols-2 gap-2">
+            {EQUIPMENT.filter((equipment) => !USUAL.includes(equipment)).map((equipment) => (
+              <What key={equipment} name={equipmentNames[equipment]} off={off} onPress={() => send({ equipment })} />
+            ))}
+          </div>
+        </details>
       </fieldset>
       <Refused>{sentenceOf(raise.error)}</Refused>
     </div>

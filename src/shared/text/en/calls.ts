@@ -52,6 +52,12 @@ export function callPlace({ equipment, scope, lane, safety }: { equipment: Equip
   return scope === 'pair' ? `${equipmentNames[equipment]}, shared with lane ${neighbourOf(lane)}` : equipmentNames[equipment];
 }
 
+/** The place, where the title doesn't say it already: `Pinsetter stopped` needs no `pinsetter`. */
+export function callWhere(call: Titled & { scope: Scope; lane: number }): string | null {
+  const place = callPlace(call);
+  return callTitle(call).toLowerCase().startsWith(place) ? null : place;
+}
+
 /** `lane 9`, `lanes 9–10`, `the house`. */
 export function callLanes({ scope, lane }: { scope: Scope; lane: number }): string {
   if (scope === 'house') return 'the house';
