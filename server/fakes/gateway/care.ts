@@ -45,7 +45,7 @@ export function careOf(night: NightKey, anchor: Anchor | null): CareRun[] {
   }
   if (trios) runs.push({ run: code(5), machine: wren, pattern: trios.pattern, lanes: lanesOfRange(...trios.lanes), from: wallInstant(night, 18 * 60 + 18), breaksAt: null });
   if (owls) runs.push(...owlsCare(night, owls.lanes, owls.pattern, anchor, draw.chance(0.12), code));
-  if (late) runs.push({ run: code(8), machine: wren, pattern: late.pattern, lanes: lanesOfRange(...late.lanes), from: wallInstant(night, 21 * 60 + 14), breaksAt: null });
+  if (late) runs.push({ run: code(8), machine: wren, pattern: late.pattern, lanes: lanesOfRange(...late.lanes), from: wallInstant(night, 21 * 60 + 18), breaksAt: null });
   return runs;
 }
 

@@ -39,7 +39,7 @@ const SLOTS: readonly Omit<InventedLeague, 'key' | 'name'>[] = [
   { slot: 'early', start: 19 * 60, lanes: [1, 12], teamSize: 4, games: 3, pattern: 'millrace', fresh: true, sanctioned: true },
   { slot: 'trios', start: 19 * 60 + 15, lanes: [19, 24], teamSize: 3, games: 3, pattern: 'house', fresh: false, sanctioned: false },
   { slot: 'owls', start: 20 * 60 + 15, lanes: [25, 32], teamSize: 4, games: 3, pattern: 'night-owls', fresh: true, sanctioned: true },
-  { slot: 'late', start: 21 * 60 + 45, lanes: [19, 24], teamSize: 2, games: 3, pattern: 'lock-gate', fresh: true, sanctioned: false },
+  { slot: 'late', start: 22 * 60 + 5, lanes: [19, 24], teamSize: 2, games: 3, pattern: 'lock-gate', fresh: true, sanctioned: false },
 ];
 
 const NAMES: Record<InventedLeague['slot'], (weekday: number) => string> = {

@@ -26,7 +26,7 @@ export function playEvents(night: NightKey, block: Block, grain: Grain, forced: 
   const { bowled, stops, end } = bowl(block, draw, forced);
   const lane = block.lane;
   const events: DeviceEvent[] = [];
-  const party = block.kind === 'party' && draw.chance(0.5);
+  const party = block.kind === 'party' && block.lane >= 17 && block.lane <= 18 && draw.chance(0.7);
   if (block.warmUpMs > 0) events.push(tell(block.from, 'lane.opened', { lane, use: 'warmup', label: block.label ?? undefined, bowlers: block.bowlers }));
   events.push(tell(block.from + block.warmUpMs, 'lane.opened', { lane, use: block.kind, bowlers: block.bowlers, ...(block.label ? { label: block.label } : {}), ...(block.frames === null ? { until: block.to, bumpers: party } : {}) }));
   for (const stop of stops) {

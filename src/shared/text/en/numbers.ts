@@ -115,7 +115,7 @@ export interface NightRow {
 export function nightRows(figures: NightFigures): NightRow[] {
   const { total } = figures;
   const ulPerLane = figures.dressed.told === 0 ? null : figures.dressed.ul / figures.dressed.told;
-  const occupancyNote = total.occupancyInService === null ? '' : `${shareText(total.occupancyInService)} of lanes in service`;
+  const occupancyNote = total.occupancyInService === null || shareText(total.occupancyInService) === shareText(total.occupancyOfAll) ? '' : `${shareText(total.occupancyInService)} of lanes in service`;
   return [
     { figure: 'occupancy', name: 'Occupancy', value: shareText(total.occupancyOfAll), note: occupancyNote, past: (v) => shareText(v) },
     { figure: 'frames', name: 'Frames', value: number(total.frames), note: `${number(total.lineage, 1)} lineage`, past: (v) => number(v) },
