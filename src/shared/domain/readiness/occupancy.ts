@@ -39,8 +39,20 @@ export function isOver(session: Session, floor: FloorState, now: number): boolea
   return came || now >= session.endAt;
 }
 
-/** Forecast of the end of a session that has begun, or its booking. */
-export const endOf = (session: Session, floor: FloorState, now: number): EndForecast =>
+/** When the last of its people left, as heard; null when nobody of it was heard. */
+function leftAt(session: Session, floor: FloorState): number | null {
+  const ends = session.lanes.flatMap((number) => (floor[number - 1]?.uses ?? []).filter((use) => belongsTo(use, session)).flatMap((use) => use.to ?? []));
+  return ends.length === 0 ? null : Math.max(...ends);
+}
+
+/** End of a session: as it was when it is over, its forecast while it lasts, or its booking. */
+export function endOf(session: Session, floor: FloorState, now: number): EndForecast {
+  if (!isOver(session, floor, now)) return forecastOf(session, floor, now);
+  const endAt = leftAt(session, floor) ?? session.endAt;
+  return { endAt, freeAt: endAt, latestFreeAt: endAt, basis: 'booked' };
+}
+
+const forecastOf = (session: Session, floor: FloorState, now: number): EndForecast =>
   forecastSession({ startAt: session.startAt, endAt: session.endAt, format: session.format, progress: progressOf(session, floor) }, now);
 
 /**
