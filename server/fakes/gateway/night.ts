@@ -14,7 +14,7 @@ const SECOND_STOP = { lane: 9, after: 5 * MINUTE, lasts: 6 * MINUTE };
 /** Everything the invented house tells of one business day, in the order of time. The same key gives the same night. */
 export function nightEvents(night: NightKey, grain: Grain, anchor: Anchor | null): DeviceEvent[] {
   const care = careOf(night, anchor);
-  const shown = anchor ? [shownBlock(anchor)] : [];
+  const shown = anchor ? shownBlocks(anchor) : [];
   const leagues = leagueBlocks(night);
   const open = openBlocks(night, [...leagues, ...careTakes(care), ...shown]);
   const play = [...leagues, ...shown, ...open].flatMap((block) => playEvents(night, block, grain, anchor ? stopsShown(block, anchor) : []));
@@ -22,10 +22,15 @@ export function nightEvents(night: NightKey, grain: Grain, anchor: Anchor | null
   return events.sort((a, b) => a.time - b.time || (a.id < b.id ? -1 : 1));
 }
 
-function shownBlock(anchor: Anchor): Block {
-  const from = anchor.at - 26 * MINUTE;
-  return { lane: FIRST_STOP.lane, place: 'shown', kind: 'open', label: null, from, to: anchor.at + 52 * MINUTE, frames: null, bowlers: 4, warmUpMs: 0 };
-}
+/** People who bowl as the newcomer looks on: since so many minutes, for so many more. */
+const SHOWN = [
+  { lane: 13, since: 18, more: 41, bowlers: 3, party: null }, { lane: 14, since: 26, more: 52, bowlers: 4, party: null }, { lane: 15, since: 44, more: 22, bowlers: 2, party: null },
+  { lane: 16, since: 31, more: 37, bowlers: 4, party: null }, { lane: 17, since: 12, more: 58, bowlers: 6, party: 'Ada is nine' }, { lane: 18, since: 12, more: 58, bowlers: 6, party: 'Ada is nine' },
+];
+
+const shownBlocks = (anchor: Anchor): Block[] => SHOWN.map(({ lane, since, more, bowlers, party }) => ({
+  lane, place: 'shown', kind: party ? 'party' : 'open', label: party, from: anchor.at - since * MINUTE, to: anchor.at + more * MINUTE, frames: null, bowlers, warmUpMs: 0,
+}));
 
 function stopsShown(block: Block, anchor: Anchor): { from: number; to: number }[] {
   const inside = (at: number) => block.from + block.warmUpMs < at && at < block.to;

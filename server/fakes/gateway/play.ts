@@ -6,6 +6,9 @@ import { type Block, FRAME_SECONDS, MINUTE, type NightKey, words } from './timet
 /** Seconds between two counter readings at an instant: coarse in the past, fine while somebody watches. */
 export type Grain = (instant: number) => number;
 
+/** Between two balls of a frame. */
+const BALL_MS = 14_000;
+
 interface Bowled {
   at: number;
   deliveries: number;
@@ -51,7 +54,8 @@ function bowl(block: Block, draw: Random, forced: readonly { from: number; to: n
   while (block.frames === null ? at < block.to - MINUTE : frames < block.frames) {
     at += FRAME_SECONDS * 1000 * (0.7 + draw.next() * 0.6);
     frames += 1;
-    bowled.push({ at, deliveries: draw.chance(0.24) ? 1 : draw.chance(0.03) ? 3 : 2, frame: true });
+    const balls = draw.chance(0.24) ? 1 : draw.chance(0.03) ? 3 : 2;
+    for (let ball = balls - 1; ball >= 0; ball -= 1) bowled.push({ at: at - ball * BALL_MS, deliveries: 1, frame: ball === 0 });
     const planned = due[0] && due[0].from <= at + FRAME_SECONDS * 1000 ? due.shift() : undefined;
     if (draw.chance(hazard) || planned) {
       const from = planned?.from ?? at + 4000;

@@ -10,8 +10,8 @@ import { openSpool, type Spool } from './spool.ts';
 const DAY_MS = 86_400_000;
 const HEARTBEAT_MS = 30_000;
 const TICK_MS = 500;
-/** Counter readings of the past every quarter of an hour, from a quarter of an hour before the start every half minute. */
-export const grainFrom = (fineFrom: number) => (instant: number): number => (instant < fineFrom ? 900 : 25);
+/** Counter readings of the past every quarter of an hour, from a quarter of an hour before the start nearly every ball. */
+export const grainFrom = (fineFrom: number) => (instant: number): number => (instant < fineFrom ? 900 : 8);
 
 export interface Tonight {
   plan: DemoPlan;
