@@ -14,10 +14,10 @@ const STOP_WITHIN_MS = 10_000;
 
 /**
  * Starts `file` (TypeScript) and keeps it running. `output` is what spawn takes
- * for standard output and error. `onMessage` hears what it sends; `onFirstExit`
+ * for standard output and error, `patienceMs` how long it may take to end. `onMessage` hears what it sends; `onFirstExit`
  * decides about a death before `settle()` was called: then it isn't started again.
  */
-export function keepRunning({ name, file, args = [], env, output, onMessage = () => {}, onFirstExit = () => {} }) {
+export function keepRunning({ name, file, args = [], env, output, patienceMs = STOP_WITHIN_MS, onMessage = () => {}, onFirstExit = () => {} }) {
   let settled = false;
   let current;
   let failures = 0;
@@ -54,7 +54,7 @@ export function keepRunning({ name, file, args = [], env, output, onMessage = ()
   const halt = async () => {
     clearTimeout(timer);
     current.unwanted = true;
-    await end(current.child);
+    await end(current.child, patienceMs);
   };
 
   launch();
@@ -81,9 +81,9 @@ export function keepRunning({ name, file, args = [], env, output, onMessage = ()
 }
 
 /** TERM to the process; after a while KILL to all of its group. */
-async function end(child) {
+async function end(child, patienceMs) {
   if (child?.pid === undefined) return;
-  const until = Date.now() + STOP_WITHIN_MS;
+  const until = Date.now() + patienceMs;
   if (child.exitCode === null && child.signalCode === null) child.kill('SIGTERM');
   while (isAlive(child.pid) && Date.now() < until) await pause(20);
   try {

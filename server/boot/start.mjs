@@ -14,6 +14,8 @@ import { askToStop, isStopAsked, keep, stopAsked, unwind } from './unwind.mjs';
 import { watchSources } from './watch.mjs';
 
 const STILL_WAITING_MS = 10_000;
+/** It keeps on disk what isn't acknowledged, so that nothing is lost when it is cut off in a long send. */
+const GATEWAY_PATIENCE_MS = 2_000;
 
 const dev = process.argv.includes('--dev');
 async function start() {
@@ -105,7 +107,7 @@ async function startServer(env, log) {
 }
 
 async function startGateway(env, log) {
-  const gateway = keepRunning({ name: 'The demo gateway', file: 'server/fakes/gateway/main.ts', args: ['--demo'], env, output: log.fd });
+  const gateway = keepRunning({ name: 'The demo gateway', file: 'server/fakes/gateway/main.ts', args: ['--demo'], env, output: log.fd, patienceMs: GATEWAY_PATIENCE_MS });
   gateway.settle();
   await keep(gateway.stop);
 }
