@@ -66,7 +66,7 @@ function CallScreen({ shown }: { shown: CallDetail }) {
         <Link to={`/${slug}/calls`} className="inline-flex min-h-hand items-center self-start pr-4 font-[620] text-dim underline decoration-rule underline-offset-4">{callText.back}</Link>
         <QueueNotes actions={actions} call={shown.id} />
         <CallHead call={call} queued={queued.length > 0} />
-        <Closed call={call} />
+        <Closed call={shown} />
         <CallFactsPart call={call} />
         <Cautions call={call} />
         <LockoutRecord call={call} mine={call.lockout?.byId === me?.id} works={works} act={act} />
