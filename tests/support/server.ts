@@ -7,7 +7,7 @@ import { compose, type Slices } from '#server/compose.ts';
 import type { Deps } from '#server/deps.ts';
 import type { Clock } from '#server/platform/clock.ts';
 import { createLedger } from '#server/platform/journal/create-ledger.ts';
-import { createLog } from '#server/platform/log.ts';
+import { createLog, type Logger } from '#server/platform/log.ts';
 import { createHub } from '#server/platform/realtime/hub.ts';
 import { startRelay } from '#server/platform/realtime/relay.ts';
 import { testConfig } from './web.ts';
@@ -23,11 +23,12 @@ interface Given {
   db: Knex;
   clock: Clock;
   ingestRate?: Rate;
+  /** To see what a test's server complained of. */
+  log?: Logger;
 }
 
 /** The whole program but for its jobs, over real HTTP and sockets, on a port of its own. */
-export async function startServer({ db, clock, ingestRate }: Given): Promise<TestServer> {
-  const log = createLog('silent');
+export async function startServer({ db, clock, ingestRate, log = createLog('silent') }: Given): Promise<TestServer> {
   const deps: Deps = { db, clock, ledger: createLedger({ db, clock }), log, config: testConfig };
   const whole = compose(deps, null, ingestRate);
   const { slices } = whole;

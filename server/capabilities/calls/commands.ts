@@ -42,7 +42,7 @@ export function callCommands(ledger: Ledger, ended: CallsReadModel) {
         const equipment = input.safety ? DANGER_AT[input.safety] : input.equipment;
         const key = callKey(equipment, input.lane, input.safety ?? null);
         const data = { lane: input.lane, equipment, safety: input.safety, text: input.text || undefined, from: from(roleIn(actor, centre.slug)) };
-        const facts: NewFact[] = [{ type: 'call.raised', data, by, after: state.calls.open[key]?.lastAt }];
+        const facts: NewFact[] = [{ type: 'call.raised', data, by, after: newestAt(state, key) }];
         return { facts, result: (after) => ({ call: present(after.state.calls.open[key]), house: after.state, now }) };
       });
     },
@@ -63,6 +63,9 @@ export function callCommands(ledger: Ledger, ended: CallsReadModel) {
 export type CallCommands = ReturnType<typeof callCommands>;
 
 const from = (role: Role | null): 'desk' | 'mechanic' => (role === 'mechanic' ? 'mechanic' : 'desk');
+
+/** A raise comes after all that was said of its place, of a call that has ended too: within that one's span it would join it. */
+const newestAt = (house: House, key: string): number | undefined => (house.calls.open[key] ?? house.calls.closed.findLast((call) => call.key === key))?.lastAt;
 
 /** A call that ended since the last checkpoint, by any of its raises. */
 export const closedSince = (house: House, id: string): Call | undefined => house.calls.closed.findLast((call) => call.id === id || call.raises.some((raised) => raised.id === id));
