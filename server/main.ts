@@ -30,6 +30,8 @@ const { slices } = whole;
 
 let ready = false;
 let stopping: Promise<void> | null = null;
+let begun: { stop(): Promise<void> }[] = [];
+for (const event of ['disconnect', 'SIGTERM', 'SIGINT'] as const) process.on(event, () => void stop());
 
 await migrate(db);
 const server = createServer();
@@ -48,20 +50,16 @@ if (config.demo && !(await demoIsLoaded(db)) && (await anyCentre(db)).every((slu
 const relay = startRelay(hub, {
   db, clock, log, centreBySlug: slices.centre.bySlug, leaguesOf: slices.leagues.leagueIds, floorDelta: slices.floor.delta, gatewaysHeardAt: slices.centre.gateways.heardAt,
 });
-const schedule = startSchedule(whole.jobs, deps);
+begun = [relay, hub, startSchedule(whole.jobs, deps)];
 ready = true;
 process.send?.({ type: 'ready' });
-
-for (const event of ['disconnect', 'SIGTERM', 'SIGINT'] as const) process.on(event, () => void stop());
 
 /** Not ready → clients are told to fetch again → what runs is finished → the pool is closed. */
 function stop(): Promise<void> {
   stopping ??= (async () => {
     ready = false;
     setTimeout(() => process.exit(1), FORCED_AFTER_MS).unref();
-    await relay.stop();
-    await hub.stop();
-    await schedule.stop();
+    for (const part of begun) await part.stop();
     server.closeIdleConnections();
     await whole.stop();
     postman?.close();

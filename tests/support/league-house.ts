@@ -2,10 +2,13 @@ import { createHash } from 'node:crypto';
 import type { LeagueForm } from '#shared/contracts/leagues.ts';
 import type { SessionView } from '#shared/contracts/readiness.ts';
 import type { DeviceData } from '#shared/domain/journal/fact.ts';
+import type { MachineCapability } from '#shared/domain/runs/capability.ts';
+import type { PatternRevision } from '#shared/domain/runs/pattern.ts';
 import { createCentre } from '#server/capabilities/centre/index.ts';
-import { createLeagues } from '#server/capabilities/leagues/index.ts';
+import { createLeagues, patternNames } from '#server/capabilities/leagues/index.ts';
 import { createNotices } from '#server/capabilities/notices/index.ts';
 import { createReadiness } from '#server/capabilities/readiness/index.ts';
+import { createRuns } from '#server/capabilities/runs/index.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import { createLedger } from '#server/platform/journal/create-ledger.ts';
 import { createLog } from '#server/platform/log.ts';
@@ -17,10 +20,16 @@ import { startWeb, testConfig } from './web.ts';
 
 const log = createLog('silent');
 let told = 0;
-const PATTERNS = [
-  { code: 'owls', name: 'Night Owls', revisions: [{ revision: 2, aUl: 20_000, bUl: 0 }, { revision: 3, aUl: 25_000, bUl: 0 }] },
-  { code: 'house', name: 'House', revisions: [{ revision: 1, aUl: 22_000, bUl: 0 }] },
-];
+/** µL a board of each revision: 2L–2R is 37 boards. */
+const revision = (lengthFt: number, ul: number): PatternRevision => ({
+  lengthFt, passes: [{ direction: 'outbound', fromBoard: { side: 'L', n: 2 }, toBoard: { side: 'R', n: 2 }, loads: 4, ul, product: 'A', fromFt: 0, toFt: 30 }],
+});
+
+const CAN: MachineCapability = {
+  oils: true, cleans: true, deckTreatment: false, products: ['A'], volume: { kind: 'per-load', minUl: 20, maxUl: 60, stepUl: 5 }, headBoards: { first: 2, last: 38 }, maxLengthFt: 60,
+  tailOffFt: 0, maxPasses: 40, maxLoads: 6, buffer: { minRpm: 100, maxRpm: 700 }, travel: { min: 100, max: 300 }, cleaner: { kind: 'premixed', waterParts: 4 }, moves: 'walks',
+  battery: true, patterns: 'network',
+};
 
 /** A league on Thursdays at 20:15, lanes 5–8; what a test cares about it says. */
 export const aLeague = (change: Partial<LeagueForm> = {}): LeagueForm => ({
@@ -34,14 +43,19 @@ export async function leagueHouse({ db }: TestDatabase, clock: FixedClock) {
   const ledger = createLedger({ db, clock });
   const centres = createCentre({ db, ledger, log, clock });
   const notices = createNotices({ db, clock, log }, null);
-  const leagues = createLeagues({ db, ledger }, { patternsOf: async () => PATTERNS.map((p) => ({ ...p, revisions: p.revisions.map((r) => r.revision) })) });
-  const readiness = createReadiness({ db, ledger, clock, config }, { centre: centres, leagues, notices, knownPatterns: async () => PATTERNS });
+  const runs = createRuns({ db, ledger }, (centre) => leagues.patternUsers(centre));
+  const leagues = createLeagues({ db, ledger }, { patternsOf: async (centre) => patternNames(await runs.library(centre)) });
+  const readiness = createReadiness({ db, ledger, clock, config }, { centre: centres, leagues, notices, runs });
   leagues.onChanged(readiness.forget);
-  const web = await startWeb(db, { clock, routes: [...leagues.routes, ...readiness.routes], leaguesOf: leagues.leagueIds });
+  const web = await startWeb(db, { clock, routes: [...leagues.routes, ...readiness.routes, ...runs.routes], leaguesOf: leagues.leagueIds });
 
   async function house(given: { zone?: string; lanes?: number; certifiedUntil?: string } = {}) {
     told += 1;
     const centre: CentreRef = await centres.add({ slug: `owls-${process.pid}-${told}`, name: 'Tarn Ferry Bowl', zone: 'UTC', lanes: 12, ...given });
+    await runs.addPattern(centre, { code: 'owls', name: 'Night Owls', revision: revision(40, 40), by: 'test' });
+    for (const ul of [45, 50]) await runs.revisePattern(centre, { code: 'owls', revision: revision(40, ul), by: 'test' });
+    await runs.addPattern(centre, { code: 'house', name: 'House', revision: revision(42, 40), by: 'test' });
+    await runs.addMachine(centre, { code: 'm1', name: 'Machine 1', capabilities: CAN });
     const [manager, desk, mechanic] = await Promise.all((['manager', 'desk', 'mechanic'] as const).map((role) => signedIn(web.url, web.accounts, { centre, role })));
     if (!manager || !desk || !mechanic) throw new Error('nobody came');
     const at = `/api/centres/${centre.slug}`;
@@ -54,12 +68,12 @@ export async function leagueHouse({ db }: TestDatabase, clock: FixedClock) {
     /** Dresses lanes one after the other, two minutes each, the last done `ago` ms before now. */
     const dress = async (lanes: number[], { ago = 0, pattern = 'owls', revision = 3, run = `r${told}` } = {}): Promise<void> => {
       const end = clock.now() - ago;
-      await device('run.started', { machine: 'M1', run, pattern, revision, lanes }, end - lanes.length * 120_000);
+      await device('run.started', { machine: 'm1', run, pattern, revision, lanes }, end - lanes.length * 120_000);
       for (const [i, lane] of lanes.entries()) {
         const finishedAt = end - (lanes.length - 1 - i) * 120_000;
-        await device('run.lane.dressed', { machine: 'M1', run, lane, startedAt: finishedAt - 120_000, finishedAt }, finishedAt);
+        await device('run.lane.dressed', { machine: 'm1', run, lane, startedAt: finishedAt - 120_000, finishedAt }, finishedAt);
       }
-      await device('run.finished', { machine: 'M1', run }, end);
+      await device('run.finished', { machine: 'm1', run }, end);
     };
     const secretary = (ids: string[]) => signedIn(web.url, web.accounts, { centre, role: 'secretary', leagues: ids });
     /** A league made by the desk; its id and the sessions of its season. */

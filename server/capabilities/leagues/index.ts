@@ -10,13 +10,15 @@ import { leagueRoutes } from './routes.ts';
 import { type MoveGuard, sessionCommands } from './session-commands.ts';
 
 export type { MoveGuard } from './session-commands.ts';
-export type { PatternName } from './nights.ts';
+export { type PatternName, patternNames } from './nights.ts';
 export { leaguesSeenBy } from './routes.ts';
 
 export interface Leagues {
   routes: Route[];
   /** Ids of all leagues of a centre. */
   leagueIds(centre: CentreRef): Promise<string[]>;
+  /** Names of the leagues that want a pattern, by its code. */
+  patternUsers(centre: CentreRef): Promise<Map<string, string[]>>;
   /** One session, whatever its status; null when the centre has none of that id. */
   session(centre: CentreRef, id: string): Promise<Session | null>;
   /** Booked sessions that touch [from, to) ms, by start. */
@@ -41,6 +43,7 @@ export function createLeagues({ db, ledger: plain }: Pick<Deps, 'db' | 'ledger'>
   return {
     routes: leagueRoutes(commands, readModel, others.patternsOf),
     leagueIds: readModel.leagueIds,
+    patternUsers: readModel.patternUsers,
     session: readModel.session,
     sessionsBetween: readModel.between,
     sessionsOfDate: readModel.ofDate,

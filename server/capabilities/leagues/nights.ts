@@ -17,6 +17,10 @@ export interface PatternName {
   revisions: readonly number[];
 }
 
+/** The names of a library of patterns, as leagues ask for them. */
+export const patternNames = (library: { patterns: readonly { code: string; name: string }[]; revisions: readonly { code: string; revision: number }[] }): PatternName[] =>
+  library.patterns.map(({ code, name }) => ({ code, name, revisions: library.revisions.filter((one) => one.code === code).map((one) => one.revision) }));
+
 const SEASON_FIELD: Record<string, string> = {
   'league.season-reversed': '/lastDate', 'league.season-too-long': '/lastDate', 'league.season-empty': '/skipDates', 'league.start-in-missing-hour': '/startMinutes', 'league.date-invalid': '/firstDate',
 };

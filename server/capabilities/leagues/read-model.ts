@@ -54,6 +54,14 @@ export function leaguesReadModel(db: Knex) {
       return rows.map((row) => fromBinary(row.id));
     },
 
+    /** Names of the leagues that want a pattern, by its code; ended ones don't. */
+    async patternUsers(centre: CentreRef): Promise<Map<string, string[]>> {
+      const rows = await db('league').where('centre_id', centre.id).whereNotNull('pattern').whereNull('ended_at').orderBy('name').select<{ pattern: string; name: string }[]>('pattern', 'name');
+      const users = new Map<string, string[]>();
+      for (const { pattern, name } of rows) users.set(pattern, [...(users.get(pattern) ?? []), name]);
+      return users;
+    },
+
     async session(centre: CentreRef, id: string): Promise<Evening | null> {
       const [found] = await eveningsOf(db, centre.id, (query) => void query.where('id', toBinary(id)));
       return found ?? null;

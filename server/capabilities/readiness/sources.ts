@@ -1,10 +1,12 @@
 import { DEFAULT_READINESS } from '#shared/domain/readiness/settings.ts';
 import type { House } from '#shared/domain/house/state.ts';
 import type { Session } from '#shared/domain/leagues/session.ts';
+import { patternVolume } from '#shared/domain/runs/volume.ts';
 import type { KnownPattern, LaneFacts, Surroundings } from '#shared/domain/readiness/situation.ts';
 import type { Centre } from '#server/capabilities/centre/index.ts';
 import type { Leagues } from '#server/capabilities/leagues/index.ts';
 import type { Notices } from '#server/capabilities/notices/index.ts';
+import type { Library, Runs } from '#server/capabilities/runs/index.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import type { Weights } from './store.ts';
 
@@ -13,8 +15,7 @@ export interface ReadinessSources {
   centre: Pick<Centre, 'lanes' | 'all'>;
   leagues: Pick<Leagues, 'session' | 'sessionsBetween' | 'sessionsOfDate' | 'movePair'>;
   notices: Pick<Notices, 'queueMail'>;
-  /** Patterns written down in a centre, with the conditioner a lane of each revision, µL. */
-  knownPatterns(centre: CentreRef): Promise<readonly KnownPattern[]>;
+  runs: Pick<Runs, 'library'>;
 }
 
 /** What of a centre's records readiness rests on, besides its house. */
@@ -30,10 +31,21 @@ const OVERRUN_MS = 12 * 3_600_000;
 
 /** Records of a centre, with the sessions that touch [now, until) or may not have left yet. */
 export async function recordsOf(sources: ReadinessSources, weightsOf: (centre: CentreRef) => Promise<Weights>, centre: CentreRef, now: number, until: number): Promise<Records> {
-  const [lanes, sessions, patterns, weights] = await Promise.all([
-    sources.centre.lanes(centre), sources.leagues.sessionsBetween(centre, now - OVERRUN_MS, until), sources.knownPatterns(centre), weightsOf(centre),
+  const [lanes, sessions, library, weights] = await Promise.all([
+    sources.centre.lanes(centre), sources.leagues.sessionsBetween(centre, now - OVERRUN_MS, until), sources.runs.library(centre), weightsOf(centre),
   ]);
-  return { lanes: lanes.map(({ lane, family, certifiedUntil }) => ({ lane, family, certifiedUntil })), sessions, patterns, weights };
+  return { lanes: lanes.map(({ lane, family, certifiedUntil }) => ({ lane, family, certifiedUntil })), sessions, patterns: knownPatterns(library), weights };
+}
+
+/** Patterns written down in a centre, with the conditioner a lane of each revision takes. */
+function knownPatterns({ patterns, revisions }: Library): KnownPattern[] {
+  return patterns.map(({ code, name }) => ({
+    code, name,
+    revisions: revisions.filter((one) => one.code === code).map(({ revision, body }) => {
+      const { A, B } = patternVolume(body).byProduct;
+      return { revision, aUl: A, bUl: B };
+    }),
+  }));
 }
 
 export const surroundings = (house: House, records: Records, now: number): Surroundings => ({

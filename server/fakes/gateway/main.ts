@@ -13,12 +13,12 @@ const { values } = parseArgs({
   options: { 'demo': { type: 'boolean' }, 'seed': { type: 'string' }, 'speed': { type: 'string', default: '60' }, 'from': { type: 'string' } },
 });
 
-let stop = false;
-for (const event of ['disconnect', 'SIGTERM', 'SIGINT'] as const) process.on(event, () => { stop = true; });
+const stop = new AbortController();
+for (const event of ['disconnect', 'SIGTERM', 'SIGINT'] as const) process.on(event, () => stop.abort());
 
 const config = configFromEnvironment();
 const plan = readPlan(config.dataDir);
-const tonight = { plan, url: `http://127.0.0.1:${config.port}`, dataDir: config.dataDir, stopped: () => stop };
+const tonight = { plan, url: `http://127.0.0.1:${config.port}`, dataDir: config.dataDir, stop: stop.signal };
 if (values.demo) {
   await live(tonight);
 } else {

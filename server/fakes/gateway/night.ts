@@ -1,7 +1,9 @@
+import { weekdayOf } from '../../../src/shared/domain/business-day.ts';
 import { type Anchor, careEvents, careOf, careTakes } from './care.ts';
 import type { DeviceEvent } from './events.ts';
+import { leaguesOn } from './invented-house.ts';
 import { type Grain, playEvents } from './play.ts';
-import { type Block, leagueBlocks, MINUTE, type NightKey, openBlocks } from './timetable.ts';
+import { type Block, lanesOf, leagueBlocks, MINUTE, type NightKey, openBlocks, wallInstant } from './timetable.ts';
 import { troubleEvents } from './trouble.ts';
 
 export type { Anchor } from './care.ts';
@@ -16,10 +18,16 @@ export function nightEvents(night: NightKey, grain: Grain, anchor: Anchor | null
   const care = careOf(night, anchor);
   const shown = anchor ? shownBlocks(anchor) : [];
   const leagues = leagueBlocks(night);
-  const open = openBlocks(night, [...leagues, ...careTakes(care), ...shown]);
+  const open = openBlocks(night, [...leagues, ...careTakes(care), ...shown, ...(anchor ? keptFresh(night, anchor) : [])]);
   const play = [...leagues, ...shown, ...open].flatMap((block) => playEvents(night, block, grain, anchor ? stopsShown(block, anchor) : []));
   const events = [...play, ...care.flatMap((run) => careEvents(night, run)), ...troubleEvents(night, anchor !== null)];
   return events.sort((a, b) => a.time - b.time || (a.id < b.id ? -1 : 1));
+}
+
+/** The anchored run dresses long before its league: nobody is let onto those lanes meanwhile. */
+function keptFresh(night: NightKey, anchor: Anchor): { lane: number; from: number; to: number }[] {
+  const owls = leaguesOn(weekdayOf(night.date)).find((league) => league.slot === 'owls');
+  return owls ? lanesOf(owls).map((lane) => ({ lane, from: anchor.at - 3 * MINUTE, to: wallInstant(night, owls.start) })) : [];
 }
 
 /** People who bowl as the newcomer looks on: since so many minutes, for so many more. */

@@ -1,15 +1,15 @@
 import { join } from 'node:path';
-import { setTimeout as sleep } from 'node:timers/promises';
 import { businessDayAt } from '../../../src/shared/domain/business-day.ts';
 import type { DeviceEvent } from './events.ts';
 import { nightEvents } from './night.ts';
 import type { DemoPlan } from './plan-file.ts';
-import { type Line, sendAll } from './sender.ts';
+import { type Line, pause, sendAll } from './sender.ts';
 import { openSpool, type Spool } from './spool.ts';
 
 const DAY_MS = 86_400_000;
 const HEARTBEAT_MS = 30_000;
 const TICK_MS = 500;
+const REPLAY_TICK_MS = 100;
 /** Counter readings of the past every quarter of an hour, from a quarter of an hour before the start nearly every ball. */
 export const grainFrom = (fineFrom: number) => (instant: number): number => (instant < fineFrom ? 900 : 8);
 
@@ -17,7 +17,8 @@ export interface Tonight {
   plan: DemoPlan;
   url: string;
   dataDir: string;
-  stopped: () => boolean;
+  /** Aborted: end soon; what waits stays on disk. */
+  stop: AbortSignal;
 }
 
 /** The night of an instant as the house will live it; the first one is anchored to the first start. */
@@ -36,14 +37,14 @@ export async function live(tonight: Tonight): Promise<void> {
   await Promise.all(plan.gateways.map((gateway) => liveOf(tonight, gateway)));
 }
 
-async function liveOf({ plan, url, dataDir, stopped }: Tonight, gateway: DemoPlan['gateways'][number]): Promise<void> {
+async function liveOf({ plan, url, dataDir, stop }: Tonight, gateway: DemoPlan['gateways'][number]): Promise<void> {
   const line: Line = { url, key: gateway.key, skewMs: gateway.skewMs };
   let night = nightAt(plan, Date.now());
   const spool = openSpool(join(dataDir, 'gateway', `${gateway.source.split(':').at(-1)}.json`), night.from);
   const boot = Date.now();
   let heartbeat = 0;
   spool.take([own(gateway.source, boot, 'gateway.started', { queued: spool.size, uptimeS: 0 })], spool.until);
-  while (!stopped()) {
+  while (!stop.aborted) {
     const now = Date.now();
     if (now >= night.to) night = nightAt(plan, now);
     const due = night.events.filter((e) => e.source === gateway.source && e.time > spool.until && e.time <= now);
@@ -51,8 +52,8 @@ async function liveOf({ plan, url, dataDir, stopped }: Tonight, gateway: DemoPla
     if (beat) heartbeat = now;
     const told = beat ? [...due, own(gateway.source, now, 'gateway.heartbeat', { queued: spool.size, uptimeS: Math.round((now - boot) / 1000) })] : due;
     if (told.length > 0) spool.take(told, now);
-    await sendAll(spool, line, stopped);
-    await sleep(TICK_MS);
+    await sendAll(spool, line, stop);
+    await pause(TICK_MS, stop);
   }
 }
 
@@ -60,13 +61,13 @@ const own = (source: string, time: number, type: 'gateway.started' | 'gateway.he
   ({ source, id: `${type}-${time}`, time, type, data });
 
 /** One night again, at `speed` times its pace, from an instant on; stops at now. The same seed sends the same events. */
-export async function replay({ plan, url, dataDir, stopped }: Tonight, options: { seed: number; speed: number; from: number }): Promise<number> {
+export async function replay({ plan, url, dataDir, stop }: Tonight, options: { seed: number; speed: number; from: number }): Promise<number> {
   const night = nightAt(plan, options.from, options.seed);
   const begun = Date.now();
   const spools = new Map<string, Spool>();
   const reached = () => Math.min(Date.now(), options.from + (Date.now() - begun) * options.speed);
   let sent = 0;
-  for (let until = options.from - 1; until < Math.min(Date.now(), night.to) && !stopped(); ) {
+  for (let until = options.from - 1; until < Math.min(Date.now(), night.to) && !stop.aborted; ) {
     const now = Math.min(reached(), night.to);
     for (const gateway of plan.gateways) {
       const spool = spools.get(gateway.source) ?? openSpool(join(dataDir, 'gateway', `replay-${options.seed}-${gateway.source.split(':').at(-1)}-${begun}.json`), options.from);
@@ -74,10 +75,10 @@ export async function replay({ plan, url, dataDir, stopped }: Tonight, options: 
       const due = night.events.filter((e) => e.source === gateway.source && e.time > until && e.time <= now).map((e) => ({ ...e, id: `${e.id}~${options.seed}` }));
       if (due.length > 0) spool.take(due, now);
       sent += due.length;
-      await sendAll(spool, { url, key: gateway.key, skewMs: gateway.skewMs }, stopped);
+      await sendAll(spool, { url, key: gateway.key, skewMs: gateway.skewMs }, stop);
     }
     until = now;
-    await sleep(Math.min(TICK_MS, 100));
+    await pause(REPLAY_TICK_MS, stop);
   }
   return sent;
 }

@@ -14,24 +14,27 @@ export interface Line {
 }
 
 /** Sends what waits, oldest first, until nothing is left. What wasn't acknowledged stays and is sent again, with growing pauses. */
-export async function sendAll(spool: Spool, line: Line, stopped: () => boolean): Promise<void> {
+export async function sendAll(spool: Spool, line: Line, stop: AbortSignal): Promise<void> {
   let wait = 500;
-  while (spool.size > 0 && !stopped()) {
+  while (spool.size > 0 && !stop.aborted) {
     const batch = spool.head(BATCH);
-    const answer = await post(line, batch.map(({ event, sequence }) => cloudEvent(event, sequence, line.skewMs)));
+    const answer = await post(line, batch.map(({ event, sequence }) => cloudEvent(event, sequence, line.skewMs)), stop);
     if (answer.taken) {
       spool.drop(batch.length);
       wait = 500;
       continue;
     }
-    await sleep(answer.retryAfterMs ?? wait);
+    await pause(answer.retryAfterMs ?? wait, stop);
     wait = Math.min(LONGEST_WAIT_MS, wait * 2);
   }
 }
 
 type Answer = { taken: true } | { taken: false; retryAfterMs: number | null };
 
-async function post(line: Line, events: readonly Record<string, unknown>[]): Promise<Answer> {
+/** Waits, but not beyond the order to stop. */
+export const pause = (ms: number, stop: AbortSignal): Promise<void> => sleep(ms, undefined, { signal: stop }).catch(() => undefined);
+
+async function post(line: Line, events: readonly Record<string, unknown>[], stop: AbortSignal): Promise<Answer> {
   try {
     const response = await fetch(`${line.url}/api/ingest/events`, {
       method: 'POST',
@@ -41,7 +44,7 @@ async function post(line: Line, events: readonly Record<string, unknown>[]): Pro
         'gateway-time': new Date(Date.now() + line.skewMs).toISOString(),
       },
       body: JSON.stringify(events),
-      signal: AbortSignal.timeout(15_000),
+      signal: AbortSignal.any([AbortSignal.timeout(15_000), stop]),
     });
     const text = await response.text();
     if (response.ok) {
@@ -53,7 +56,7 @@ async function post(line: Line, events: readonly Record<string, unknown>[]): Pro
     const seconds = Number(response.headers.get('retry-after'));
     return { taken: false, retryAfterMs: seconds > 0 ? seconds * 1000 : null };
   } catch (error) {
-    if (error instanceof TypeError || (error as Error).name === 'TimeoutError') return { taken: false, retryAfterMs: null };
+    if (error instanceof TypeError || stop.aborted || (error as Error).name === 'TimeoutError') return { taken: false, retryAfterMs: null };
     throw error;
   }
 }

@@ -77,7 +77,7 @@ const MACHINES: Record<string, Wording> = {
   'pinsetter.fine': fine(() => 'OK'),
   'pinsetter.cause-missing': fine(() => 'OK, cause missing'),
   'pinsetter.stopped': { cell: (p, clock) => `Stopped ${clock(count(p, 'sinceAt'))}`, says: (p, clock, many) => `${has(many)} stopped${mustBe(p, clock)}` },
-  'pinsetter.unanswered': { cell: () => 'Call unanswered', says: (p, clock, many) => `wait${many ? '' : 's'} for a mechanic: nobody has answered${mustBe(p, clock)}` },
+  'pinsetter.unanswered': { cell: () => 'Call unanswered', says: (p, clock, many) => `wait${many ? '' : 's'} for a mechanic${mustBe(p, clock)}; nobody has answered` },
   'pinsetter.coming': { cell: (p) => `${somebody(p)} on the way`, says: (p, clock, many) => `wait${many ? '' : 's'} for ${somebody(p)}, on the way,${mustBe(p, clock)}`.replace(/,$/, '') },
   'pinsetter.on-lane': { cell: (p) => `${somebody(p)} on lane`, says: (p, clock, many) => `wait${many ? '' : 's'} for ${somebody(p)}, on lane,${mustBe(p, clock)}`.replace(/,$/, '') },
   'pinsetter.mechanic-in': { cell: () => 'Mechanic in machine', says: (p, clock, many) => `wait${many ? '' : 's'} for the mechanic${mustBe(p, clock)}` },
