@@ -61,10 +61,10 @@ export type ResponseOf<C> = C extends Contract<Schema, Schema, Schema, infer R> 
 export const slug = z.string().check(z.regex(/^[a-z0-9](?:[a-z0-9-]{0,38}[a-z0-9])?$/));
 export const centreParams = z.object({ centre: slug });
 export const uuid = z.string().check(z.regex(/^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/));
-/** Epoch milliseconds. */
-export const instant = z.int();
-/** A local calendar date, `yyyy-mm-dd`. */
-export const date = z.string().check(z.regex(/^\d{4}-\d{2}-\d{2}$/));
+/** Epoch milliseconds from 1970 to the end of the year 9999, where MariaDB's DATETIME ends. */
+export const instant = z.int().check(z.minimum(0), z.maximum(253_402_300_799_999));
+/** A local calendar date, `yyyy-mm-dd`, of the years 2000 to 2999: its instants are always ours to keep. */
+export const date = z.string().check(z.regex(/^2\d{3}-\d{2}-\d{2}$/));
 export const laneNumber = z.int().check(z.minimum(1), z.maximum(99));
 /** Lane number in a path. */
 export const laneParam = z.coerce.number().check(z.int(), z.minimum(1), z.maximum(99));
