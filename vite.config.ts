@@ -12,6 +12,7 @@ export default defineConfig({
   server: { watch: { ignored: ['**/.data/**', '**/dist/**'] } },
   build: { target: 'es2022', sourcemap: false, manifest: true },
   test: {
+    maxWorkers: 2,
     projects: [
       node('unit', ['src/**/*.test.ts', 'server/**/*.test.ts', 'tests/reference/**/*.test.ts']),
       { extends: true, test: { name: 'screen', include: ['src/**/*.test.tsx'], environment: 'happy-dom' } },
@@ -20,13 +21,13 @@ export default defineConfig({
         globalSetup: ['tests/support/global-setup.ts'],
         testTimeout: 60_000,
         hookTimeout: 60_000,
-        maxWorkers: 2,
       }),
       node('e2e', ['tests/e2e/**/*.test.ts'], {
         globalSetup: ['tests/support/global-setup.ts'],
         testTimeout: 180_000,
         hookTimeout: 180_000,
         fileParallelism: false,
+        sequence: { groupOrder: 1 },
       }),
     ],
   },

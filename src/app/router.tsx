@@ -17,6 +17,12 @@ const calls = () => import('../features/calls/index.ts');
 const CallsPage = page(calls, 'CallsPage');
 const CallPage = page(calls, 'CallPage');
 const NumbersPage = page(() => import('../features/numbers/index.ts'), 'NumbersPage');
+const readiness = () => import('../features/readiness/index.ts');
+const ReadinessPage = page(readiness, 'ReadinessPage');
+const SessionPage = page(readiness, 'SessionPage');
+const leagues = () => import('../features/leagues/index.ts');
+const LeaguesPage = page(leagues, 'LeaguesPage');
+const LeaguePage = page(leagues, 'LeaguePage');
 
 export function Router() {
   return (
@@ -33,6 +39,10 @@ export function Router() {
             <Route path="floor" element={<FloorPage />} />
             <Route path="calls" element={<CallsPage />} />
             <Route path="calls/:call" element={<CallPage />} />
+            <Route path="readiness" element={<ReadinessPage />} />
+            <Route path="readiness/:session" element={<SessionPage />} />
+            <Route path="leagues" element={<LeaguesPage />} />
+            <Route path="leagues/:league" element={<LeaguePage />} />
             <Route path="numbers/:date?" element={<NumbersPage />} />
             <Route path="*" element={<NotFound />} />
           </Route>

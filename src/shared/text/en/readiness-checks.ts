@@ -125,11 +125,16 @@ export function checkSentence(lanes: readonly number[], { code, params }: Pick<S
   return `${subject} ${said}.`;
 }
 
+/** `Lane 31`, `Lanes 25–32`: in a line of facts. */
+export const listedLanes = (lanes: readonly number[]): string => {
+  const said = lanesText(lanes);
+  return said.charAt(0).toUpperCase() + said.slice(1);
+};
+
 /** `Lane 31`, `Lanes 27 and 28`, `Lanes 25–32`. */
 export function laneSubject(lanes: readonly number[]): string {
   if (lanes.length === 2) return `Lanes ${listed(lanes.map(String))}`;
-  const said = lanesText(lanes);
-  return said.charAt(0).toUpperCase() + said.slice(1);
+  return listedLanes(lanes);
 }
 
 /** Who or what a lane waits for, in a word or two. */

@@ -1,0 +1,2 @@
+export { LeaguePage } from './league-page.tsx';
+export { LeaguesPage } from './leagues-page.tsx';

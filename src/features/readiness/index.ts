@@ -1,0 +1,2 @@
+export { ReadinessPage } from './readiness-page.tsx';
+export { SessionPage } from './session-page.tsx';
