@@ -16,12 +16,12 @@ import { SAMPLES, type Asked } from '#tests/support/samples.ts';
 import { startServer, type TestServer } from '#tests/support/server.ts';
 
 /** Requests of a route with a body, and of one without; together more than ten thousand. */
-const WITH_BODY = 300;
-const WITHOUT = 60;
+const WITH_BODY = 240;
+const WITHOUT = 40;
 /** Statuses that speak of the request alone. */
 const INPUT = new Set([400, 413, 415, 422]);
 /** Sent at once; after each batch that was refused the tables must be as before. */
-const BATCH = 20;
+const BATCH = 40;
 /** The same requests at every run; another seed finds others. */
 const SEED = 20_260_514;
 /**

@@ -89,7 +89,7 @@ const TYPES = new Set(['object', 'array', 'string', 'number', 'integer', 'boolea
 function check(schema: Json, where: string): void {
   for (const type of [schema['type'] ?? []].flat() as string[]) expect(TYPES, where).toContain(type);
   if (schema['pattern'] !== undefined) expect(() => new RegExp(schema['pattern'] as string, 'u')).not.toThrow();
-  const named = (schema['propertyNames'] as { enum?: string[] } | undefined)?.enum ?? Object.keys((schema['properties'] ?? {}) as Json);
+  const named = (schema['propertyNames'] as { enum?: string[] } | undefined)?.enum ?? Object.keys((schema['properties'] ?? {}));
   if (schema['required'] !== undefined) expect(named, where).toEqual(expect.arrayContaining(schema['required'] as string[]));
   for (const inner of Object.values((schema['properties'] ?? {}) as Record<string, Json>)) check(inner, where);
   for (const inner of (schema['anyOf'] ?? schema['oneOf'] ?? []) as Json[]) check(inner, where);

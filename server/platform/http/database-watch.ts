@@ -1,11 +1,15 @@
 import knex, { type Knex } from 'knex';
 import { setTimeout as pause } from 'node:timers/promises';
+import { isDatabaseAway } from '../db/errors.ts';
 import { Refusal } from './refusal.ts';
 
 /** A request that takes longer than this asks whether the database still answers … */
 const PATIENCE_MS = 1_200;
-/** … and gives it this long. Together below the two seconds within which a caller hears that it is away. */
+/** … and gives it this long, together below the two seconds within which a caller hears that it is away … */
 const PING_MS = 600;
+/** … in slices: an answer that lay waiting while this process was busy is read before the next one ends. */
+const SLICES = 6;
+const LAX_MS = 10_000;
 const RETRY_S = 2;
 
 /**
@@ -39,8 +43,10 @@ const pings = new WeakMap<Knex, { beside: Knex; underWay: Promise<boolean> | nul
 export async function databaseAnswers(db: Knex): Promise<boolean> {
   let ping = pings.get(db);
   if (ping === undefined) {
-    const config = (db.client as { config: Knex.Config }).config;
-    ping = { beside: knex({ ...config, pool: { min: 0, max: 1, idleTimeoutMillis: 1_000 } }), underWay: null };
+    const { config } = db.client as { config: Knex.Config & { connection: { password?: string } } };
+    // Its own limits lie beyond ours: they run while this process is busy with other things. Knex hides the password from a spread.
+    const connection = { ...config.connection, password: config.connection.password, connectTimeout: LAX_MS };
+    ping = { beside: knex({ ...config, connection, acquireConnectionTimeout: LAX_MS, pool: { min: 0, max: 1, idleTimeoutMillis: 1_000 } }), underWay: null };
     pings.set(db, ping);
   }
   const { beside } = ping;
@@ -48,7 +54,9 @@ export async function databaseAnswers(db: Knex): Promise<boolean> {
   return ping.underWay;
 }
 
-function askOnce(beside: Knex): Promise<boolean> {
-  const answered = beside.raw('select 1').then(() => true, () => false);
-  return Promise.race([answered, pause(PING_MS, false, { ref: false })]);
+async function askOnce(beside: Knex): Promise<boolean> {
+  let answer: boolean | null = null;
+  beside.raw('select 1').then(() => (answer = true), (error: unknown) => (answer = !isDatabaseAway(error)));
+  for (let slice = 0; slice < SLICES && answer === null; slice += 1) await pause(PING_MS / SLICES, undefined, { ref: false });
+  return answer === true;
 }
