@@ -43,7 +43,7 @@ const pings = new WeakMap<Knex, { beside: Knex; underWay: Promise<boolean> | nul
 export async function databaseAnswers(db: Knex): Promise<boolean> {
   let ping = pings.get(db);
   if (ping === undefined) {
-    const { config } = db.client as { config: Knex.Config & { connection: { password?: string } } };
+    const { config } = db.client as { config: Omit<Knex.Config, 'connection'> & { connection: { password?: string } } };
     // Its own limits lie beyond ours: they run while this process is busy with other things. Knex hides the password from a spread.
     const connection = { ...config.connection, password: config.connection.password, connectTimeout: LAX_MS };
     ping = { beside: knex({ ...config, connection, acquireConnectionTimeout: LAX_MS, pool: { min: 0, max: 1, idleTimeoutMillis: 1_000 } }), underWay: null };

@@ -11,17 +11,6 @@ export const signInText = {
   noAccount: 'No account? The manager of your centre makes one for you.',
 } as const;
 
-export const accountText = {
-  signedInAs: (name: string) => `Signed in as ${name}`,
-  signOut: 'Sign out',
-  signOutHere: 'Sign out here',
-  sessions: 'Where you are signed in',
-  thisSession: 'this browser',
-  endSession: 'Sign out there',
-  lastSeen: (when: string) => `last seen ${when}`,
-  unknownProgram: 'unknown program',
-} as const;
-
 export const roleText: Record<Role, string> = { manager: 'Manager', desk: 'Desk', mechanic: 'Mechanic', secretary: 'League secretary', display: 'Display' };
 
 export const refusals: Sentences = {
