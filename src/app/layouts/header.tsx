@@ -51,7 +51,7 @@ export function Header({ me }: { me: Identity }) {
 /** Open calls that nobody answered, else all that are open. */
 export function OpenCalls() {
   const calls = useBoard('calls') ?? [];
-  const unanswered = calls.some((c) => c.status === 'unanswered');
+  const unanswered = calls.some((c) => c.status === 'unanswered' && c.returnedAt === null);
   if (calls.length === 0) return null;
   return (
     <span className={classes('ml-1.5 inline-block min-w-5 rounded-full px-1.5 text-center text-xs leading-5 font-[720]', unanswered ? 'bg-red text-on-red' : 'bg-ink text-paper')}>

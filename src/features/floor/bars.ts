@@ -44,14 +44,19 @@ export function nowBars(lanes: readonly LaneView[], sessions: readonly SessionBa
     if (!view) return null;
     const session = view.use?.session ? sessions.find((s) => s.id === view.use?.session) : view.use ? undefined : playing.find((s) => lanesOf(s).includes(lane));
     if (session) return { key: `session:${session.id}`, look: lookOfPlay(session.kind), text: sessionNowText(session, zone), session: session.id };
-    if (view.use) {
-      const pair = Math.ceil(lane / 2);
-      const key = `use:${view.use.kind}:${view.use.label ?? `pair ${pair}`}:${view.use.until ?? ''}`;
-      return { key, look: view.use.kind === 'league' || view.use.kind === 'tournament' ? 'league' : 'open', text: useText(view.use, zone), session: null };
-    }
+    if (view.use) return pieceOfUse(view, view.use, lanes, zone);
     const run = underWay.find((r) => r.lanes.includes(lane));
     return run ? { key: `run:${run.key}`, look: 'run', text: runText(run, zone), session: null } : null;
   });
+}
+
+/** A named party may span many lanes; people without a name share a bar with the other lane of their pair. */
+function pieceOfUse(view: LaneView, use: NonNullable<LaneView['use']>, lanes: readonly LaneView[], zone: string): Piece {
+  const alike = (other: LaneView | undefined) => other?.use?.kind === use.kind && other.use.label === use.label;
+  const pair = Math.ceil(view.lane / 2);
+  const together = [lanes[2 * pair - 2], lanes[2 * pair - 1]].filter(alike).flatMap((l) => l?.use ?? []);
+  const key = use.label === null ? `use:${use.kind}:pair ${pair}` : `use:${use.kind}:${use.label}:${use.until ?? ''}`;
+  return { key, look: use.kind === 'league' || use.kind === 'tournament' ? 'league' : 'open', text: useText(use.label === null ? together : [use], zone), session: null };
 }
 
 const lookOfPlay = (kind: SessionBar['kind']): Bar['look'] => (kind === 'league' || kind === 'tournament' ? 'league' : 'open');

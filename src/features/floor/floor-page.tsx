@@ -10,8 +10,9 @@ import { KeysHelp } from './components/keys-help.tsx';
 import { NightLine } from './components/night-line.tsx';
 import { Plan } from './components/plan.tsx';
 import { Side } from './components/side.tsx';
+import type { FloorProps } from './floor-props.ts';
 import { useFloorKeys } from './use-floor-keys.ts';
-import { type LaneMode, type Selection, useLaneMode, useLaneSelection } from './use-lane-selection.ts';
+import { type LaneMode, useLaneMode, useLaneSelection } from './use-lane-selection.ts';
 
 /** What isn't there at first sight is fetched after it: the panel when the page rests, the turned plan on a phone. */
 const panelCode = () => import('./components/lane-panel.tsx');
@@ -49,13 +50,6 @@ export function FloorPage() {
     );
   }
   return <Desk selection={selection} mode={mode} onMode={setMode} panel={panel} callAddress={callAddress} sessionAddress={sessionAddress} lanes={centre.lanes} />;
-}
-
-export interface FloorProps {
-  selection: Selection;
-  panel: React.ReactNode;
-  callAddress: ((call: string) => string) | null;
-  sessionAddress: ((session: string) => string) | null;
 }
 
 function Desk({ selection, mode, onMode, panel, callAddress, sessionAddress, lanes }: FloorProps & { mode: LaneMode; onMode: (mode: LaneMode) => void; lanes: number }) {

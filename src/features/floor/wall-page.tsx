@@ -9,7 +9,7 @@ import { useLiveness } from '../../lib/live.ts';
 import { LaneBadge } from '../../ui/marks.tsx';
 import { useBoard } from './board-context.ts';
 import { Plan } from './components/plan.tsx';
-import { toneOf } from './components/side.tsx';
+import { toneOf, waitsForSomebody } from './components/side.tsx';
 
 /**
  * The house on a wall, dark and without a pointer. Far layer: figures of 79 px and the state on each machine, for six metres.
@@ -76,7 +76,7 @@ function WallFoot() {
           <li key={call.id} className="flex items-center gap-3">
             <LaneBadge lane={call.scope === 'house' ? '–' : call.lane} tone={toneOf(call)} size={34} />
             <span className="text-2xl font-[640]">{callTitle(call)}</span>
-            <span className={`type-clock text-[2rem] ${call.status === 'unanswered' ? 'text-red' : 'text-dim'}`}>{elapsed(now - call.raisedAt)}</span>
+            <span className={`type-clock text-[2rem] ${waitsForSomebody(call) ? 'text-red' : 'text-dim'}`}>{elapsed(now - call.raisedAt)}</span>
           </li>
         ))}
         {calls.length > SHOWN ? <li className="self-center text-2xl text-dim">{floorWords.moreCalls(calls.length - SHOWN)}</li> : null}

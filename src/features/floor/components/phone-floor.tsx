@@ -7,7 +7,7 @@ import { useLiveness } from '../../../lib/live.ts';
 import { RunningClock } from '../../../ui/running-clock.tsx';
 import { groupLanes, type LaneGroup } from '../bars.ts';
 import { useBoard } from '../board-context.ts';
-import type { FloorProps } from '../floor-page.tsx';
+import type { FloorProps } from '../floor-props.ts';
 import { useLaneAct } from '../mutations.ts';
 import { useBars } from '../use-bars.ts';
 import { LaneRow } from './lane-row.tsx';

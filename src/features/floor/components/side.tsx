@@ -11,7 +11,9 @@ import { RunningClock } from '../../../ui/running-clock.tsx';
 import { Fact, Facts } from '../../../ui/table.tsx';
 import { useBoard } from '../board-context.ts';
 
-export const toneOf = (call: CallView): BadgeTone => (call.mechanicIn ? 'mechanic-in' : call.status === 'unanswered' ? 'unanswered' : call.status === 'acknowledged' || call.status === 'on-lane' ? 'answered' : 'plain');
+/** A machine that runs again only lacks its cause: paperwork, not an alarm. */
+export const waitsForSomebody = (call: CallView): boolean => call.status === 'unanswered' && call.returnedAt === null;
+export const toneOf = (call: CallView): BadgeTone => (call.mechanicIn ? 'mechanic-in' : waitsForSomebody(call) ? 'unanswered' : call.returnedAt !== null ? 'outline' : call.status === 'acknowledged' || call.status === 'on-lane' ? 'answered' : 'plain');
 
 interface Addresses {
   call: ((call: string) => string) | null;
@@ -52,8 +54,8 @@ export function Calls({ address }: { address: Addresses['call'] }) {
                     callTitle(call)
                   )}
                 </b>
-                <span className={call.status === 'unanswered' ? 'whitespace-nowrap text-red' : 'whitespace-nowrap'}>
-                  {call.status === 'unanswered' ? <Mark kind="unanswered" size={12} className="mr-1" /> : null}
+                <span className={waitsForSomebody(call) ? 'whitespace-nowrap text-red' : 'whitespace-nowrap'}>
+                  {waitsForSomebody(call) ? <Mark kind="unanswered" size={12} className="mr-1" /> : null}
                   <RunningClock since={call.raisedAt} className="type-clock text-[1.1875rem]" />
                 </span>
               </div>

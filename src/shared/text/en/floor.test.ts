@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { LaneView, RunBar, SessionBar } from '../../contracts/floor.ts';
-import { callWho, laneSentence, levelsText, pipsText, runText, sessionNextText, sessionNowText } from './floor.ts';
+import { callWho, laneSentence, levelsText, pipsText, runText, sessionNextText, sessionNowText, useText } from './floor.ts';
 
 const NOW = Date.parse('2026-05-14T18:42:00Z');
 const MINUTE = 60_000;
@@ -76,9 +76,14 @@ describe('bars and sides', () => {
     says: '27 waits', lanes: [{ lane: 25, state: 'ok' }, { lane: 26, state: 'ok' }, { lane: 27, state: 'holds' }, { lane: 28, state: 'waits' }], confirmed: null, game: 2, frame: null,
   };
   it('what comes says when, what plays says where it is', () => {
-    expect(sessionNextText(session, 'Europe/London')).toMatchObject({ title: 'Night Owls 20:15', short: 'NO', second: ['27 waits'] });
+    expect(sessionNextText(session, 'Europe/London')).toMatchObject({ title: 'Night Owls 20:15', short: 'NO', second: ['2 of 4', '27 waits'] });
     expect(sessionNowText(session, 'Europe/London').second).toEqual(['game 2', 'about 22:37']);
     expect(sessionNowText({ ...session, phase: 'warm-up', game: null }, 'Europe/London').second).toEqual(['warm-up till 20:15', 'about 22:37']);
+  });
+  it('both lanes of a pair say their ends, once when they are the same', () => {
+    const until = (minutes: number) => use({ kind: 'open', label: null, until: NOW + minutes * MINUTE });
+    expect(useText([until(33), until(33)], 'Europe/London')).toEqual({ title: 'Open', short: 'O', second: ['20:15'] });
+    expect(useText([until(48), until(33)], 'Europe/London').second).toEqual(['20:15 and 20:30']);
   });
   it('pips say in words which lanes are how', () => expect(pipsText(session)).toBe('lanes 25–26 ready; lane 28 wait as planned; lane 27 held'));
   it('a run says what is dressed, where it is, when it is through, and that its pattern is unverified', () => {

@@ -1,7 +1,7 @@
 import type { CallView, LaneView, RunBar, SessionBar } from '../../contracts/floor.ts';
 import type { Equipment, LaneUseKind } from '../../domain/equipment.ts';
 import { equipmentNames, safetyNames, statusNames, useNames } from './calls.ts';
-import { feet, lanesText, number, plural, spokenElapsed, timeOfDay } from './formats.ts';
+import { feet, lanesText, listed, number, plural, spokenElapsed, timeOfDay } from './formats.ts';
 import type { Sentences } from './sentences.ts';
 
 type LaneCall = NonNullable<LaneView['call']>;
@@ -92,15 +92,25 @@ export function sessionNowText(session: SessionBar, zone: string): BarText {
   return { title: session.name, short: initials(session.name), second: [warm, place, `about ${timeOfDay(session.endAt, zone)}`].filter((p) => p !== null) };
 }
 
+/** `6 of 8`, while not every lane is ready and at least one is. */
+function readyCount(session: SessionBar): string | null {
+  const ready = session.lanes.filter((l) => l.state === 'ok').length;
+  return ready === session.lanes.length || session.verdict === 'planned' ? null : `${ready} of ${session.lanes.length}`;
+}
+
 export const sessionNextText = (session: SessionBar, zone: string): BarText => ({
   title: `${session.name} ${timeOfDay(session.startAt, zone)}`,
   short: initials(session.name),
-  second: session.says ? [session.says] : [],
+  second: [readyCount(session), session.says].filter((p) => p !== null),
 });
 
-export function useText(use: NonNullable<LaneView['use']>, zone: string): BarText {
+/** People on one lane or on both of a pair: the times at which they are booked to end are said once when they are the same. */
+export function useText(uses: readonly NonNullable<LaneView['use']>[], zone: string): BarText {
+  const [use] = uses;
+  if (!use) return { title: '', short: '', second: [] };
+  const ends = [...new Set(uses.map((u) => u.until).filter((u) => u !== null))].sort((a, b) => a - b).map((at) => timeOfDay(at, zone));
   const title = use.label ?? (use.kind === 'open' ? 'Open' : use.kind === 'unknown' ? 'In use' : useNames[use.kind]);
-  return { title, short: initials(title), second: [use.quiet ? 'quiet' : null, use.until === null ? null : timeOfDay(use.until, zone)].filter((p) => p !== null) };
+  return { title, short: initials(title), second: [uses.some((u) => u.quiet) ? 'quiet' : null, ends.length === 0 ? null : listed(ends)].filter((p) => p !== null) };
 }
 
 export function runText(run: RunBar, zone: string): BarText {
