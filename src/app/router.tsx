@@ -17,6 +17,7 @@ const calls = () => import('../features/calls/index.ts');
 const CallsPage = page(calls, 'CallsPage');
 const CallPage = page(calls, 'CallPage');
 const NumbersPage = page(() => import('../features/numbers/index.ts'), 'NumbersPage');
+const SettingsPage = page(() => import('../features/centre/index.ts'), 'SettingsPage');
 const readiness = () => import('../features/readiness/index.ts');
 const ReadinessPage = page(readiness, 'ReadinessPage');
 const SessionPage = page(readiness, 'SessionPage');
@@ -44,6 +45,7 @@ export function Router() {
             <Route path="leagues" element={<LeaguesPage />} />
             <Route path="leagues/:league" element={<LeaguePage />} />
             <Route path="numbers/:date?" element={<NumbersPage />} />
+            <Route path="settings" element={<SettingsPage />} />
             <Route path="*" element={<NotFound />} />
           </Route>
           <Route path="*" element={<NotFound />} />

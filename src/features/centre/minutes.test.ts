@@ -1,0 +1,8 @@
+import { expect, it } from 'vitest';
+import { clockOf, minutesOf } from './minutes.ts';
+
+it('minutes and clock say the same', () => {
+  for (const minutes of [0, 1, 59, 60, 240, 1439]) expect(minutesOf(clockOf(minutes))).toBe(minutes);
+  expect(clockOf(1440)).toBe('00:00');
+});
+it('what is no time is none', () => expect(['', '24:00', '12:60', '1:00', 'noon'].map(minutesOf)).toEqual([null, null, null, null, null]));
