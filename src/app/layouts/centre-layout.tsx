@@ -68,11 +68,11 @@ function Framed({ me }: { me: Identity }) {
   const { pathname } = useLocation();
   const onFloor = /\/floor\/?$/.test(pathname);
   return (
-    <>
+    <div className={onFloor ? 'flex min-h-dvh flex-col min-[900px]:h-dvh min-[900px]:min-h-[40rem]' : 'flex min-h-dvh flex-col'}>
       <a href="#page" className="sr-only z-50 bg-ink px-4 py-2 text-paper focus:not-sr-only focus:absolute">{wording.skip}</a>
       <Header me={me} />
       <AwayBanner />
-      <main id="page" tabIndex={-1} className={`flex min-h-0 grow flex-col outline-none max-[900px]:pb-20 ${onFloor ? 'min-[900px]:h-[calc(100dvh-3.5rem)] min-[900px]:min-h-[36rem]' : ''}`}>
+      <main id="page" tabIndex={-1} className="flex min-h-0 grow flex-col outline-none max-[900px]:pb-20">
         <ErrorBoundary place={pathname}>
           <Suspense fallback={<div className="p-6"><Skeleton lines={6} label={wording.loading} /></div>}>
             <Outlet />
@@ -86,7 +86,7 @@ function Framed({ me }: { me: Identity }) {
           <CallAlerts />
         </Suspense>
       </ErrorBoundary>
-    </>
+    </div>
   );
 }
 

@@ -1,9 +1,9 @@
 /** `HH:MM` of minutes after midnight; 1440 is the end of the day, which a time field can't say: 00:00. */
 export const clockOf = (minutes: number): string => `${String(Math.floor((minutes % 1440) / 60)).padStart(2, '0')}:${String(minutes % 60).padStart(2, '0')}`;
 
-/** Minutes after midnight of `HH:MM`; null when it isn't a time. */
+/** Minutes after midnight of `HH:MM` or `H:MM`; null when it isn't a time. */
 export function minutesOf(clock: string): number | null {
-  const match = /^(\d{2}):(\d{2})(?::00)?$/.exec(clock);
+  const match = /^(\d{1,2}):(\d{2})$/.exec(clock.trim());
   const [hours, minutes] = [Number(match?.[1]), Number(match?.[2])];
   return match && hours < 24 && minutes < 60 ? hours * 60 + minutes : null;
 }

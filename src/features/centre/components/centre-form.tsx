@@ -41,9 +41,9 @@ export function CentreForm({ settings, edits }: { settings: CentreSettings; edit
       <PartTitle>{settingsWords.centre}</PartTitle>
       <form noValidate onSubmit={(event) => void submit(event)} className="border-t border-rule pt-3">
         <fieldset disabled={!edits} className="flex flex-col gap-4">
-          <div className="grid gap-4 min-[700px]:grid-cols-2">
+          <div className="grid items-end gap-4 min-[700px]:grid-cols-2">
             <Field label={settingsWords.name} error={fieldSentenceOf(save.error, 'name')}>{(c) => <Input {...c} maxLength={80} {...register('name')} />}</Field>
-            <Field label={settingsWords.cut} error={fieldSentenceOf(save.error, 'cut')} hint={settingsWords.cutHint}>{(c) => <Input {...c} type="time" step={900} {...register('cut')} />}</Field>
+            <Field label={settingsWords.cut} error={formState.errors.cut ? settingsWords.noTime : fieldSentenceOf(save.error, 'cut')} hint={settingsWords.cutHint}>{(c) => <Input {...c} inputMode="numeric" maxLength={5} {...register('cut', { validate: (value) => minutesOf(value) !== null })} />}</Field>
           </div>
           <Field label={settingsWords.zone} hint={settingsWords.zoneHint} error={zoneError}>{(c) => <Input {...c} {...register('zone')} />}</Field>
           <fieldset>
@@ -64,16 +64,16 @@ export function CentreForm({ settings, edits }: { settings: CentreSettings; edit
 function Day({ day, at, open, register, error }: { day: string; at: number; open: boolean; register: UseFormRegister<Draft>; error: string | null }) {
   const time = { required: open, validate: (value: string) => !open || minutesOf(value) !== null };
   return (
-    <div className="grid min-h-11 grid-cols-[9rem_7rem_auto_7rem] items-center gap-2 max-[900px]:grid-cols-[7.5rem_minmax(0,1fr)_auto_minmax(0,1fr)]">
+    <div className="grid min-h-11 max-[900px]:min-h-14 grid-cols-[9rem_5.5rem_1rem_5.5rem] items-center gap-2 max-[900px]:grid-cols-[8rem_5.5rem_1rem_5.5rem]">
       <label className="flex items-center gap-2.5">
         <input type="checkbox" aria-label={settingsWords.openOn(day)} className="size-5 accent-ink" {...register(`days.${at}.open`)} />
         {day}
       </label>
       {open ? (
         <>
-          <Input type="time" aria-label={settingsWords.from(day)} aria-invalid={error ? true : undefined} {...register(`days.${at}.from`, time)} />
-          <span aria-hidden>–</span>
-          <Input type="time" aria-label={settingsWords.to(day)} aria-invalid={error ? true : undefined} {...register(`days.${at}.to`, time)} />
+          <Input inputMode="numeric" maxLength={5} aria-label={settingsWords.from(day)} aria-invalid={error ? true : undefined} {...register(`days.${at}.from`, time)} />
+          <span aria-hidden className="text-center">–</span>
+          <Input inputMode="numeric" maxLength={5} aria-label={settingsWords.to(day)} aria-invalid={error ? true : undefined} {...register(`days.${at}.to`, time)} />
         </>
       ) : (
         <span className="text-dim">{settingsWords.closed}</span>
