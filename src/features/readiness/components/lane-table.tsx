@@ -24,7 +24,8 @@ export function LaneTable({ lanes }: { lanes: readonly LaneReadinessView[] }) {
       <thead>
         <tr>
           <Th>{text.columns.lane}</Th>
-          {COLUMNS.map((column) => <Th key={column} className={column === 'pattern' ? undefined : wide}>{text.columns[column]}</Th>)}
+          <Th className="min-[901px]:hidden">{text.columns.state}</Th>
+          {COLUMNS.map((column) => <Th key={column} className={wide}>{text.columns[column]}</Th>)}
           <Th>{text.columns.waitsFor}</Th>
         </tr>
       </thead>
@@ -35,9 +36,9 @@ export function LaneTable({ lanes }: { lanes: readonly LaneReadinessView[] }) {
               <LaneBadge lane={lane.lane} tone={TONE[lane.mark]} size={20} />
               <span className="sr-only">{markLabel(lane.lane, markNames[lane.mark])}</span>
             </th>
-            <Td className="min-[901px]:hidden"><Words cell={headline(lane, time)} /></Td>
-            {COLUMNS.map((column) => <Td key={column} className={wide}><Words cell={cellOf(lane, column, time)} /></Td>)}
-            <Td className={classes(lane.mark === 'holds' && 'font-[700]')}>{waitsFor(lane)}</Td>
+            <Td className="align-middle! min-[901px]:hidden"><Words cell={headline(lane, time)} /></Td>
+            {COLUMNS.map((column) => <Td key={column} className={classes(wide, 'align-middle!')}><Words cell={cellOf(lane, column, time)} /></Td>)}
+            <Td className={classes('align-middle!', lane.mark === 'holds' && 'font-[700]')}>{waitsFor(lane)}</Td>
           </tr>
         ))}
       </tbody>

@@ -19,9 +19,11 @@ const STOPS_MOST = 4;
 export function TimeLine({ session }: { session: SessionView }) {
   const now = useNow(10_000);
   const { time } = useTimes();
-  const between: Stop[] = session.moments.filter((moment) => moment.at > now && moment.at <= session.warmUpAt).slice(0, STOPS_MOST)
+  const between: Stop[] = session.moments.filter((moment) => moment.at > now && moment.at < session.warmUpAt).slice(0, STOPS_MOST)
     .map((moment) => ({ at: moment.at, says: momentText(moment.kind, moment.lanes), dot: moment.mark }));
-  const stops: Stop[] = [{ at: now, says: text.now, dot: 'plain' }, ...between, { at: session.warmUpAt, says: text.warmUp, dot: 'plain' }];
+  const last = session.moments.filter((moment) => moment.at === session.warmUpAt);
+  const warmUp: Stop = { at: session.warmUpAt, says: [text.warmUp, ...last.map((moment) => momentText(moment.kind, moment.lanes))].join(' · '), dot: last[0]?.mark ?? 'plain' };
+  const stops: Stop[] = [{ at: now, says: text.now, dot: 'plain' }, ...between, warmUp];
   return (
     <ol aria-label={text.timeline} className="my-6 flex max-w-5xl border-t-[3px] border-ink max-[900px]:flex-col max-[900px]:border-t-0 max-[900px]:border-l-[3px] max-[900px]:pl-4">
       {stops.map((stop, i) => (

@@ -36,15 +36,21 @@ function Buttons({ session, onRaise }: { session: SessionView; onRaise: () => vo
   const standing = session.confirmation !== null && session.confirmation.reopened === null;
   const holds = session.verdict === 'held' || session.verdict === null;
   return (
-    <div className="mt-4 flex flex-col gap-3 max-[900px]:sticky max-[900px]:bottom-[calc(3.5rem+env(safe-area-inset-bottom))] max-[900px]:z-10 max-[900px]:-mx-4 max-[900px]:border-t max-[900px]:border-rule max-[900px]:bg-card max-[900px]:px-4 max-[900px]:py-3">
-      {holds && !standing ? <p id="why-not" className="text-sm font-[620]">{text.confirmFirst}</p> : null}
-      {standing ? null : (
-        <Button kind="primary" size="hand" busy={confirm.isPending} disabled={holds || confirm.isPending} aria-describedby={holds ? 'why-not' : undefined} onClick={() => confirm.mutate(undefined, { onSuccess: () => showToast(confirmedToast(session.lanes)) })}>
-          {confirmLabel(session.lanes)}
-        </Button>
-      )}
-      <Button kind="secondary" size="hand" onClick={onRaise}>{text.raise}</Button>
-      <Refused>{sentenceOf(confirm.error)}</Refused>
-    </div>
+    <>
+      <div className="mt-4 flex flex-col gap-3 max-[900px]:fixed max-[900px]:inset-x-0 max-[900px]:bottom-[calc(3.5rem+env(safe-area-inset-bottom))] max-[900px]:z-10 max-[900px]:mt-0 max-[900px]:border-t max-[900px]:border-rule max-[900px]:bg-card max-[900px]:px-4 max-[900px]:py-3">
+        {holds && !standing ? <p id="why-not" className="text-sm font-[620]">{text.confirmFirst}</p> : null}
+        <Refused>{sentenceOf(confirm.error)}</Refused>
+        <div className="flex flex-row-reverse gap-3 min-[901px]:flex-col">
+          {standing ? null : (
+            <Button kind="primary" size="hand" className="grow px-3! whitespace-normal!" busy={confirm.isPending} disabled={holds || confirm.isPending} aria-describedby={holds ? 'why-not' : undefined} onClick={() => confirm.mutate(undefined, { onSuccess: () => showToast(confirmedToast(session.lanes)) })}>
+              {confirmLabel(session.lanes)}
+            </Button>
+          )}
+          <Button kind="secondary" size="hand" className="px-3! max-[900px]:grow" onClick={onRaise}>{text.raise}</Button>
+        </div>
+      </div>
+      {/* What stands behind the buttons at the thumb must be reachable by scrolling. */}
+      <div aria-hidden className="h-28 min-[901px]:hidden" />
+    </>
   );
 }

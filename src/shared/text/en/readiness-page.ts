@@ -7,7 +7,7 @@ export const readinessText = {
   loading: 'Readiness', failed: 'Readiness can’t be shown.', retry: 'Try again', back: 'All sessions', tonight: 'Tonight', none: 'No league or tournament is booked today.',
   noneMore: 'Leagues make their sessions by themselves; the desk books the rest.', noneOwn: 'Your league doesn’t bowl today.', noneOwnMore: 'On its next night its lanes are shown here.',
   others: 'Also on lanes', othersNote: 'not watched', weights: 'What holds',
-  columns: { lane: 'Lane', pattern: 'Pattern', free: 'Lane free', pinsetter: 'Pinsetter', other: 'Other', waitsFor: 'Waits for' },
+  columns: { lane: 'Lane', state: 'State', pattern: 'Pattern', free: 'Lane free', pinsetter: 'Pinsetter', other: 'Other', waitsFor: 'Waits for' },
   tableCaption: 'Lanes of the session and what every check says', timeline: 'Until warm-up', now: 'now', warmUp: 'warm-up', start: 'start', ok: 'OK',
   frozen: 'Warm-up has begun. This is how it was then; what stops now is a call.', cancelled: 'This session was cancelled.', noVerdict: 'Nothing was recorded before warm-up.',
   word: 'Your word', wordMore: 'Play doesn’t wait for it. If a lane gets worse before warm-up, this opens again and you are told.', wordOfSecretary: 'The secretary’s word',
