@@ -6,6 +6,8 @@ import { heardServerTime } from '../lib/clock.ts';
 import { heardWord, linkCut } from '../lib/live.ts';
 
 const HINT_MS = 500;
+/** What follows from time alone no event tells: a gateway gone silent, a league that begins, a film that ages. */
+const TIME_PASSES_MS = 20_000;
 
 type Wire = Socket<{ [E in keyof ServerEvents]: (payload: ServerEvents[E]) => void }, ClientEvents>;
 
@@ -66,10 +68,12 @@ export function connect(centre: string, board: BoardStore, queries: QueryClient)
     board.resync();
     if (!socket.connected) socket.connect();
   };
+  const timePasses = setInterval(() => (document.visibilityState === 'visible' && socket.connected ? board.resync() : undefined), TIME_PASSES_MS);
   document.addEventListener('visibilitychange', seenAgain);
   window.addEventListener('pageshow', seenAgain);
   window.addEventListener('online', seenAgain);
   return () => {
+    clearInterval(timePasses);
     document.removeEventListener('visibilitychange', seenAgain);
     window.removeEventListener('pageshow', seenAgain);
     window.removeEventListener('online', seenAgain);

@@ -26,8 +26,16 @@ export function touchedBy(before: House, after: House, changes: readonly TableCh
     }
   }
   if (before.runs !== after.runs) touched.add('runs');
+  for (const lane of underMachines(before, after)) lanes.add(lane);
   const readiness = before.calls !== after.calls || before.runs.active !== after.runs.active || before.runs.ended !== after.runs.ended
     || after.floor.some((lane, i) => lane !== before.floor[i] && differs(readinessOf(lane), before.floor[i] ? readinessOf(before.floor[i]) : []));
   if (readiness) touched.add('sessions');
   return { lanes: [...lanes].sort((a, b) => a - b), topics: [...touched] };
+}
+
+/** Lanes of runs that changed: which of them the machine is on follows from the run, no row of the lane says it. */
+function underMachines(before: House, after: House): number[] {
+  const keys = new Set([...Object.keys(before.runs.active), ...Object.keys(after.runs.active)]);
+  const changed = [...keys].filter((key) => before.runs.active[key] !== after.runs.active[key]);
+  return changed.flatMap((key) => [...(before.runs.active[key]?.lanes ?? []), ...(after.runs.active[key]?.lanes ?? [])]);
 }
