@@ -9,7 +9,7 @@ export function FitText({ title, short, seconds = [], width, size = 12.5 }: { ti
   return (
     <span className="whitespace-nowrap" style={{ fontSize: size, fontStretch: `${fitted.stretch}%` }}>
       <b className="font-[690]">{fitted.title}</b>
-      {fitted.second ? <span className="ml-2 font-[480] opacity-85">{fitted.second}</span> : null}
+      {fitted.second ? <span className="ml-2 font-[480] opacity-90">{fitted.second}</span> : null}
     </span>
   );
 }

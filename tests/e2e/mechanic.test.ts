@@ -1,0 +1,94 @@
+import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { systemClock } from '#server/platform/clock.ts';
+import { laneOnScreen, openBrowser, PHONE, SOON, type TestBrowser } from '#tests/support/browser.ts';
+import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
+import { floorHouse, type FloorHouse } from '#tests/support/floor-house.ts';
+import { startServer, type TestServer } from '#tests/support/server.ts';
+
+let database: TestDatabase;
+let server: TestServer;
+let browser: TestBrowser;
+let house: FloorHouse;
+
+beforeAll(async () => {
+  database = await freshDatabase();
+  server = await startServer({ db: database.db, clock: systemClock });
+  browser = await openBrowser();
+  house = await floorHouse(server, 32);
+});
+afterEach(() => browser.closePages());
+afterAll(async () => {
+  await browser.close();
+  await server.close();
+  await database.close();
+});
+
+const LOCKOUT = ['Desk and bowlers told', 'Machine stopped', 'No ball comes from the neighbour lane', 'Machine off at the isolator', 'Ball lift off, own supply', 'My lock and tag on', 'Deck and rake down, springs released', 'Tried the start: stays dead'];
+const RELEASE = ['Tools out', 'Guards on', 'People clear', 'Told: it will run', 'My own lock and tag off'];
+
+describe('the mechanic’s phone, from the floor', () => {
+  it('hears of a stop, takes it, reaches in with a record, releases, sets it running, and finds it in the history', async () => {
+    const page = await browser.page(server.url, house.mechanic, PHONE);
+    await page.goto(house.at('/floor'));
+    await page.locator('[data-live="live"]').waitFor();
+    const strip = page.getByRole('alert').filter({ hasText: 'Deck jam' });
+    expect(await strip.count()).toBe(0);
+    await house.device('lane.opened', { lane: 9, use: 'league', label: 'Thursday Scratch' });
+    const told = Date.now();
+    await house.device('pinsetter.stopped', { lane: 9, text: 'Deck jam', pins: [4] });
+    await strip.waitFor();
+    expect(Date.now() - told).toBeLessThan(1000);
+    expect(await strip.textContent()).toContain('Thursday Scratch');
+    await strip.getByRole('button', { name: 'Mine' }).click();
+    await strip.waitFor({ state: 'hidden' });
+    await page.getByText('The call on lane 9 is yours.').waitFor();
+    await expect.poll(() => laneOnScreen(page, 9), SOON).toMatchObject({ mark: 'answered' });
+
+    await page.getByRole('link', { name: 'Deck jam' }).click();
+    await page.getByRole('heading', { level: 1, name: 'Deck jam' }).waitFor();
+    await page.getByRole('button', { name: 'On lane', exact: true }).click();
+    await page.getByText('you are on lane').waitFor();
+    await page.getByRole('button', { name: 'Begin the lockout record' }).click();
+    const tick = async (step: string) => {
+      const box = page.getByRole('checkbox', { name: step });
+      await box.click();
+      await page.getByRole('checkbox', { name: step, checked: true }).or(page.getByText('Before it runs again')).first().waitFor();
+    };
+    for (const step of LOCKOUT) await tick(step);
+    await page.getByText(/in machine, recorded/).first().waitFor();
+    expect(await page.getByRole('button', { name: 'Back running', exact: true }).isDisabled()).toBe(true);
+    const second = await browser.page(server.url, house.desk);
+    await second.goto(house.at('/floor'));
+    await second.locator('[data-lane="9"][data-mark="mechanic-in"]').waitFor();
+    expect((await laneOnScreen(second, 9)).says).toContain(`mechanic in machine: ${house.mechanic.name}`);
+    for (const step of RELEASE) await tick(step);
+    await page.getByRole('button', { name: 'End the lockout record' }).click();
+    await page.getByRole('button', { name: 'Back running', exact: true }).click();
+    await page.getByRole('button', { name: 'Deck', exact: true }).click();
+    await page.getByRole('button', { name: 'Pin off spot', exact: true }).click();
+    await page.getByLabel(/^Note/).fill('cup worn');
+    await page.getByRole('button', { name: 'Back running: lane 9' }).click();
+    await page.getByText(/^Closed .* by .*: Deck: pin off spot\./).waitFor();
+    await second.locator('[data-lane="9"]:not([data-mark="mechanic-in"]):not([data-mark="answered"])').waitFor();
+    expect((await laneOnScreen(second, 9)).says).toMatch(/league Thursday Scratch(?!.*call)/);
+
+    await house.device('pinsetter.stopped', { lane: 9 });
+    await page.getByRole('link', { name: 'All calls' }).click();
+    await page.getByRole('link', { name: 'Pinsetter stopped' }).click();
+    await page.getByRole('heading', { level: 1, name: 'Pinsetter stopped' }).waitFor();
+    const history = page.getByRole('listitem').filter({ hasText: 'pin off spot' }).filter({ hasText: 'cup worn' });
+    await history.first().waitFor();
+    expect(await history.first().textContent()).toContain(house.mechanic.name);
+  });
+
+  it('opens a lane of the turned plan and closes it again', async () => {
+    const page = await browser.page(server.url, house.mechanic, PHONE);
+    await page.goto(house.at('/floor'));
+    await page.locator('[data-lane="21"]').click();
+    const sheet = page.getByRole('dialog');
+    await sheet.getByRole('button', { name: 'Raise a call' }).waitFor();
+    expect(await sheet.getByRole('button', { name: /^Open lane/ }).count()).toBe(0);
+    await page.keyboard.press('Escape');
+    await sheet.waitFor({ state: 'hidden' });
+  });
+});
