@@ -64,7 +64,8 @@ function Desk({ selection, mode, onMode, panel, callAddress, sessionAddress, lan
         <Plan selected={selection.lane} onSelect={selection.select} sessionAddress={sessionAddress} />
         <FloorKey typed={selection.typed} lanes={lanes} field={field} onLane={selection.select} onHelp={() => setHelp(true)} />
       </div>
-      <aside aria-label={panel ? floorWords.laneAside : floorWords.aside} className="overflow-y-auto border-l border-rule bg-card px-5 py-4">
+      {/* eslint-disable-next-line jsx-a11y/no-noninteractive-tabindex -- what scrolls must be reachable by keyboard (WCAG 2.1.1) */}
+      <aside tabIndex={0} aria-label={panel ? floorWords.laneAside : floorWords.aside} className="overflow-y-auto border-l border-rule bg-card px-5 py-4">
         {panel ?? <Side addresses={{ call: callAddress, session: sessionAddress }} />}
       </aside>
       <KeysHelp open={help} onClose={() => setHelp(false)} />
