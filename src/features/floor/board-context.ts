@@ -10,10 +10,8 @@ export function useBoardStore(): BoardStore {
   return store;
 }
 
-type Listed = Exclude<Part, 'count'>;
-
 /** One list of the floor; null before the first snapshot. Drawn again only when that list changes. */
-export function useBoard<K extends Listed>(part: K): FloorSnapshot[K] | null {
+export function useBoard<K extends Part>(part: K): FloorSnapshot[K] | null {
   const store = useBoardStore();
   const subscribe = useCallback(
     (listener: () => void) => {
@@ -40,8 +38,7 @@ export function useLanesDigest(digest: (lanes: readonly LaneView[]) => string): 
   const store = useBoardStore();
   const subscribe = useCallback(
     (listener: () => void) => {
-      const count = store.snapshot()?.lanes.length ?? 0;
-      const ends = [store.subscribe('ready', listener), ...Array.from({ length: count }, (_, i) => store.subscribe(`lane:${i + 1}`, listener))];
+      const ends = [store.subscribe('ready', listener), store.subscribe('lanes', listener)];
       return () => ends.forEach((end) => end());
     },
     [store],

@@ -1,9 +1,9 @@
 import type { FloorDelta, FloorSnapshot, LaneView } from '#shared/contracts/floor.ts';
 import type { Heartbeat } from '#shared/realtime/events.ts';
 
-/** Lists of the floor that a delta replaces whole; lanes have a subscription each (`lane:9`). */
-export type Part = 'calls' | 'sessions' | 'runs' | 'machines' | 'gateways' | 'tonight' | 'business' | 'centre' | 'count';
-type Key = Part | `lane:${number}` | 'ready';
+/** Lists of the floor that a delta replaces whole; lanes have a subscription each (`lane:9`), and one for all (`lanes`), told once a batch. */
+export type Part = 'calls' | 'sessions' | 'runs' | 'machines' | 'gateways' | 'tonight' | 'business' | 'centre';
+type Key = Part | 'lanes' | `lane:${number}` | 'ready';
 
 export interface BoardWorld {
   fetchSnapshot: () => Promise<FloorSnapshot>;
@@ -145,6 +145,7 @@ export class BoardStore {
     this.state = { ...this.state, ...rest };
     if (!lanes?.length) return;
     const next = [...this.lanes];
+    changed.add('lanes');
     for (const view of lanes) {
       next[view.lane - 1] = view;
       changed.add(`lane:${view.lane}`);
@@ -165,10 +166,9 @@ export class BoardStore {
     const lanes = snapshot.lanes.map((view) => {
       const known = this.lanes[view.lane - 1];
       if (known && same(known, view)) return known;
-      changed.add(`lane:${view.lane}`);
+      changed.add('lanes').add(`lane:${view.lane}`);
       return view;
     });
-    if (lanes.length !== this.lanes.length) changed.add('count');
     this.state = { ...snapshot, ...kept };
     this.setLanes(lanes);
     this.tell(changed);

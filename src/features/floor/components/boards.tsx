@@ -1,3 +1,4 @@
+import { memo } from 'react';
 import type { LaneView } from '#shared/contracts/floor.ts';
 import { boardWords } from '#shared/text/en/floor.ts';
 import { canvasMeasure, fitWord, useFontReady } from '../../../lib/fit-text.ts';
@@ -24,15 +25,22 @@ export function Boards({ view, now, width, height }: Props) {
   return (
     <span className="boards">
       {rig === null ? <Film view={view} share={share} height={height} width={width} /> : <Rig share={rig} film={share ?? 1} height={height} width={width} />}
-      {height < NEAR_LAYER ? null : <svg aria-hidden className="darts" viewBox="0 0 70 20" style={{ height: Math.max(8, width * 0.3) }} preserveAspectRatio="none">
-        <path d="M3 14l2 6H1zM13 9l2 6h-4zM23 4.5l2 6h-4zM35 0l2.2 6.5h-4.4zM47 4.5l2 6h-4zM57 9l2 6h-4zM67 14l2 6h-4z" />
-      </svg>}
+      {height < NEAR_LAYER ? null : <Darts height={Math.max(8, width * 0.3)} />}
       {view.bumpers ? <span className="rails" /> : null}
       {view.outOfService ? <span className="closed" /> : null}
       {view.brokenOff && height >= NEAR_LAYER ? <Redo width={width} /> : null}
     </span>
   );
 }
+
+/** The arrows, fifteen feet from the foul line. */
+const Darts = memo(function Darts({ height }: { height: number }) {
+  return (
+    <svg aria-hidden className="darts" viewBox="0 0 70 20" style={{ height }} preserveAspectRatio="none">
+      <path d="M3 14l2 6H1zM13 9l2 6h-4zM23 4.5l2 6h-4zM35 0l2.2 6.5h-4.4zM47 4.5l2 6h-4zM57 9l2 6h-4zM67 14l2 6h-4z" />
+    </svg>
+  );
+});
 
 function Film({ view, share, width, height }: { view: LaneView; share: number | null; width: number; height: number }) {
   if (!view.film) return null;

@@ -1,3 +1,4 @@
+import { memo } from 'react';
 import { capWords } from '#shared/text/en/floor.ts';
 import { canvasMeasure, fitWord, useFontReady } from '../../../lib/fit-text.ts';
 import { Mark } from '../../../ui/marks.tsx';
@@ -19,7 +20,7 @@ const WORDS: Partial<Record<LaneMark, readonly string[]>> = {
 const GLYPH = { 'unanswered': 'unanswered', 'danger': 'unanswered', 'answered': 'answered', 'out-of-service': 'out-of-service', 'parked': 'parked' } as const;
 
 /** The machine at the head of a lane: a short line at rest, else a mark with its clock or words. */
-export function Cap({ mark, since, now, width, height }: Props) {
+export const Cap = memo(function Cap({ mark, since, now, width, height }: Props) {
   useFontReady();
   const size = Math.min(34, Math.max(11.5, height * (height > 70 ? 0.4 : 0.29)));
   const glyph = mark in GLYPH ? GLYPH[mark as keyof typeof GLYPH] : null;
@@ -46,4 +47,4 @@ export function Cap({ mark, since, now, width, height }: Props) {
       </span>
     </span>
   );
-}
+});
