@@ -8,6 +8,7 @@ import { heardWord, linkCut } from '../lib/live.ts';
 const HINT_MS = 500;
 /** What follows from time alone no event tells: a gateway gone silent, a league that begins, a film that ages. */
 const TIME_PASSES_MS = 20_000;
+const REJOIN_MS = 2000;
 
 type Wire = Socket<{ [E in keyof ServerEvents]: (payload: ServerEvents[E]) => void }, ClientEvents>;
 
@@ -43,6 +44,34 @@ function hintGate(invalidate: (topic: Topic) => void): (topics: readonly Topic[]
 }
 
 /**
+ * Joins the centre's rooms, and again after whatever socket.io doesn't come back from by itself: a database that was away when the
+ * server asked who we are, or a connection that the server ended (the snapshot's answer says whether the sign-in was revoked).
+ */
+function keepJoined(socket: Wire, centre: string, board: BoardStore): () => void {
+  let timer: ReturnType<typeof setTimeout> | undefined;
+  const later = (what: () => void) => {
+    clearTimeout(timer);
+    timer = setTimeout(what, REJOIN_MS);
+  };
+  const watch = () => {
+    if (socket.connected) socket.emit('watch', { centre }, ({ ok, code }) => (!ok && code === 'database.away' ? later(watch) : undefined));
+  };
+  socket.on('connect', watch);
+  socket.on('disconnect', (reason) => {
+    linkCut();
+    if (reason !== 'io server disconnect') return;
+    board.resync();
+    later(() => socket.connect());
+  });
+  socket.on('connect_error', () => {
+    if (socket.active) return;
+    board.resync();
+    later(() => socket.connect());
+  });
+  return () => clearTimeout(timer);
+}
+
+/**
  * Keeps one centre live: one socket, one loop over the events. Gives what ends it. After each connect, and whenever the page
  * is seen again, the board compares itself with the server by fetching the snapshot.
  */
@@ -53,12 +82,11 @@ export function connect(centre: string, board: BoardStore, queries: QueryClient)
   for (const event of Object.keys(TARGETS) as (keyof ServerEvents)[]) socket.on(event, loop[event]);
   let connectedBefore = false;
   socket.on('connect', () => {
-    socket.emit('watch', { centre }, () => undefined);
     board.resync();
     if (connectedBefore) void queries.invalidateQueries({ queryKey: [centre] });
     connectedBefore = true;
   });
-  socket.on('disconnect', linkCut);
+  const leave = keepJoined(socket, centre, board);
   socket.io.on('reconnect_attempt', linkCut);
   socket.connect();
   board.resync();
@@ -74,6 +102,7 @@ export function connect(centre: string, board: BoardStore, queries: QueryClient)
   window.addEventListener('online', seenAgain);
   return () => {
     clearInterval(timePasses);
+    leave();
     document.removeEventListener('visibilitychange', seenAgain);
     window.removeEventListener('pageshow', seenAgain);
     window.removeEventListener('online', seenAgain);

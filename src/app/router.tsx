@@ -2,6 +2,7 @@ import { type ComponentType, lazy, Suspense } from 'react';
 import { BrowserRouter, Navigate, Route, Routes } from 'react-router-dom';
 import { wording } from '#shared/text/en/app.ts';
 import { FloorPage, WallPage } from '../features/floor/index.ts';
+import { patient } from '../lib/patient.ts';
 import { Skeleton } from '../ui/page.tsx';
 import { Home } from './home.tsx';
 import { CentreLayout } from './layouts/centre-layout.tsx';
@@ -9,7 +10,7 @@ import { NotFound } from './not-found.tsx';
 
 /** A page of a slice, fetched when it is first gone to. */
 function page<M, K extends keyof M>(load: () => Promise<M>, name: K) {
-  return lazy(async () => ({ default: (await load())[name] as ComponentType }));
+  return lazy(async () => ({ default: (await patient(load))[name] as ComponentType }));
 }
 
 const SignInPage = page(() => import('../features/accounts/index.ts'), 'SignInPage');

@@ -9,7 +9,7 @@ export type Liveness = { state: 'starting' | 'live' | 'reconnecting' | 'stale'; 
 /** Silence after which the screen says "reconnecting" (a beat and its grace), and after which it is stale (10 s, said in time). */
 export const RECONNECTING_AFTER_MS = 4000;
 export const CUT_SHOWN_AFTER_MS = 2000;
-export const STALE_AFTER_MS = 9500;
+export const STALE_AFTER_MS = 9000;
 
 interface Heard {
   /** Monotonic ms of the last good word, of the cut (null: connected), and of the start. */

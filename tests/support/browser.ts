@@ -33,7 +33,7 @@ export async function openBrowser(): Promise<TestBrowser> {
       if (who) await context.addCookies(cookiesOf(who.cookie, url));
       const page = await context.newPage();
       page.setDefaultTimeout(20_000);
-      page.on('pageerror', (error) => thrown.push(`${page.url()}: ${error.stack ?? error.message}`));
+      page.on('pageerror', (error) => thrown.push(`${page.url()}: ${error.name} ${error.message} ${error.stack ?? ''}`));
       return page;
     },
     async closePages() {

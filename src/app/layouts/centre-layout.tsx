@@ -9,6 +9,7 @@ import { call, isAway, Problem } from '../../lib/api.ts';
 import { CentreContext, type CentreHere } from '../../lib/centre.ts';
 import { heardServerTime } from '../../lib/clock.ts';
 import { heardWord, linkStarted } from '../../lib/live.ts';
+import { patient } from '../../lib/patient.ts';
 import { Skeleton } from '../../ui/page.tsx';
 import { ToastRegion } from '../../ui/toast.tsx';
 import { ErrorBoundary } from '../error-boundary.tsx';
@@ -23,7 +24,7 @@ import { TabBar } from './tab-bar.tsx';
 const ALERTS_AFTER_MS = 1500;
 const CallAlerts = lazy(async () => {
   await new Promise((done) => setTimeout(done, ALERTS_AFTER_MS));
-  return { default: (await import('../../features/calls/index.ts')).CallAlerts };
+  return { default: (await patient(() => import('../../features/calls/index.ts'))).CallAlerts };
 });
 
 /** Who looks, and at which of their centres; sends to the sign-in page, or says that nothing is there. */
@@ -45,10 +46,12 @@ export function CentreLayout({ bare = false }: { bare?: boolean }) {
   if (found === 'loading') return <Loading />;
   if (found === 'sign-in') return <Navigate to={`/sign-in?next=${encodeURIComponent(location.pathname + location.search)}`} replace />;
   if (found === 'not-found') return <NotFound />;
+  // A screen on the wall has nothing to press: every address of its centre is the wall.
+  if (found.here.role === 'display' && !bare) return <Navigate to={`/${found.here.slug}/wall`} replace />;
   return (
     <CentreContext value={found.here}>
       <LiveBoard key={found.here.slug} slug={found.here.slug}>
-        {bare || found.here.role === 'display' ? <Outlet /> : <Framed me={found.me} />}
+        {bare ? <Outlet /> : <Framed me={found.me} />}
       </LiveBoard>
     </CentreContext>
   );

@@ -3,6 +3,7 @@ import { lazy, Suspense, useEffect, useRef, useState } from 'react';
 import { floorWords } from '#shared/text/en/floor-page.ts';
 import { useCentre } from '../../lib/centre.ts';
 import { useMedia } from '../../lib/media.ts';
+import { patient } from '../../lib/patient.ts';
 import { Skeleton } from '../../ui/page.tsx';
 import { useBoard } from './board-context.ts';
 import { FloorKey } from './components/floor-key.tsx';
@@ -16,8 +17,8 @@ import { type LaneMode, useLaneMode, useLaneSelection } from './use-lane-selecti
 
 /** What isn't there at first sight is fetched after it: the panel when the page rests, the turned plan on a phone. */
 const panelCode = () => import('./components/lane-panel.tsx');
-const LanePanel = lazy(() => panelCode().then((m) => ({ default: m.LanePanel })));
-const PhoneFloor = lazy(() => import('./components/phone-floor.tsx').then((m) => ({ default: m.PhoneFloor })));
+const LanePanel = lazy(() => patient(panelCode).then((m) => ({ default: m.LanePanel })));
+const PhoneFloor = lazy(() => patient(() => import('./components/phone-floor.tsx')).then((m) => ({ default: m.PhoneFloor })));
 const REST_MS = 2500;
 
 /** Below this width the plan turns a quarter: lanes become rows. */
@@ -33,7 +34,7 @@ export function FloorPage() {
   const callAddress = may('call.see') ? (call: string) => `/${slug}/calls/${call}` : null;
   const sessionAddress = may('readiness.see') ? (session: string) => `/${slug}/readiness/${session}` : null;
   useEffect(() => {
-    const timer = setTimeout(() => void panelCode(), REST_MS);
+    const timer = setTimeout(() => void panelCode().catch(() => undefined), REST_MS);
     return () => clearTimeout(timer);
   }, []);
   if (!centre) return <div className="p-6"><Skeleton lines={8} label={floorWords.loading} /></div>;

@@ -4,6 +4,7 @@ import { callTitle } from '#shared/text/en/calls.ts';
 import { useCentre } from '../../../lib/centre.ts';
 import { sentenceOf } from '../../../lib/refusal.ts';
 import { useLiveness } from '../../../lib/live.ts';
+import { patient } from '../../../lib/patient.ts';
 import { RunningClock } from '../../../ui/running-clock.tsx';
 import { groupLanes, type LaneGroup } from '../bars.ts';
 import { useBoard } from '../board-context.ts';
@@ -13,7 +14,7 @@ import { useBars } from '../use-bars.ts';
 import { LaneRow } from './lane-row.tsx';
 import { Calls, NextSessions, Tonight } from './side.tsx';
 
-const LaneSheet = lazy(() => import('./lane-sheet.tsx').then((m) => ({ default: m.LaneSheet })));
+const LaneSheet = lazy(() => patient(() => import('./lane-sheet.tsx')).then((m) => ({ default: m.LaneSheet })));
 
 /** The plan turned a quarter: a lane is a row, its pins to the right; rows are grouped by what plays on them. */
 export function PhoneFloor({ selection, panel, callAddress, sessionAddress }: FloorProps) {
