@@ -3,7 +3,9 @@ import { useState } from 'react';
 import { Link, useParams } from 'react-router-dom';
 import type { BookingView, LeagueForm, LeagueView } from '#shared/contracts/leagues.ts';
 import { businessDayAt } from '#shared/domain/business-day.ts';
+import { appText } from '#shared/text/en/app.ts';
 import { leagueLine, leaguesText as text, patternLine, secretariesLine, wallTime } from '#shared/text/en/leagues-page.ts';
+import { Problem } from '../../lib/api.ts';
 import { useCentre } from '../../lib/centre.ts';
 import { serverNow } from '../../lib/clock.ts';
 import { sentenceOf } from '../../lib/refusal.ts';
@@ -27,8 +29,9 @@ export function LeaguePage() {
   const found = useQuery({ ...leagueQuery(slug, id), enabled: !fresh });
   const error = house.error ?? found.error;
   if (!house.data || (!fresh && !found.data)) {
+    const gone = error instanceof Problem && [404, 422].includes(error.status);
     return (
-      <Page title={error ? text.failed : text.loading} lead={sentenceOf(error)}>
+      <Page title={gone ? appText.notFound : error ? text.failed : text.loading} lead={gone ? appText.notFoundMore : sentenceOf(error)}>
         {error ? <Link className={buttonLook()} to={`/${slug}/leagues`}>{text.back}</Link> : <Skeleton lines={8} label={text.loading} />}
       </Page>
     );

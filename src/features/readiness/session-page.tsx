@@ -3,6 +3,7 @@ import { useState } from 'react';
 import { Link, useParams } from 'react-router-dom';
 import type { SessionView } from '#shared/contracts/readiness.ts';
 import { outstanding } from '#shared/domain/readiness/session.ts';
+import { appText } from '#shared/text/en/app.ts';
 import { frozenSentence, sessionSentence } from '#shared/text/en/readiness.ts';
 import { readinessText as text, sessionLead } from '#shared/text/en/readiness-page.ts';
 import { Problem } from '../../lib/api.ts';
@@ -27,7 +28,7 @@ export function SessionPage() {
   if (data) return <SessionScreen key={data.id} session={data} />;
   const gone = error instanceof Problem && [404, 422].includes(error.status);
   return (
-    <Page title={error ? text.failed : text.loading} lead={sentenceOf(error)}>
+    <Page title={gone ? appText.notFound : error ? text.failed : text.loading} lead={gone ? appText.notFoundMore : sentenceOf(error)}>
       {error ? (
         <div className="flex gap-3">
           <Link className={buttonLook()} to={`/${slug}/readiness`}>{text.back}</Link>
