@@ -38,7 +38,7 @@ export function Fact({ term, children, note }: { term: string; children: ReactNo
       <dt className="type-label">{term}</dt>
       <dd className="type-number mt-0.5 text-[1.6875rem] leading-tight">
         {children}
-        {note ? <small className="ml-1 text-sm font-[500] text-dim [font-stretch:94%]">{note}</small> : null}
+        {note ? <small className="ml-1 inline-block whitespace-nowrap text-sm font-[500] text-dim [font-stretch:94%]">{note}</small> : null}
       </dd>
     </div>
   );

@@ -36,7 +36,7 @@ function overlaps(pieces: readonly Piece[]): string[] {
 
 /** Runs in the page. Texts count by the height of their capitals: line boxes hold air above and below. */
 function drawn(): Drawn {
-  const MARKS = '.strip, .return, .bar, .night-bar, .night-warm, .cap-in > svg, .cap-clock, .cap-words, .balls, .redo, .rig, .row-strip, .row-boards, .row-deck';
+  const MARKS = 'body > * footer, .strip, .return, .bar, .night-bar, .night-warm, .cap-in > svg, .cap-clock, .cap-words, .balls, .redo, .rig, .row-strip, .row-boards, .row-deck';
   const CAPITALS = 0.72;
   const shown = (element: Element): boolean => {
     const { opacity, visibility } = getComputedStyle(element);
@@ -44,17 +44,33 @@ function drawn(): Drawn {
     return width > 1 && height > 1 && visibility === 'visible' && opacity !== '0' && element.checkVisibility({ opacityProperty: true, visibilityProperty: true });
   };
   const ancestors = (element: Element): Element[] => (element.parentElement ? [element, ...ancestors(element.parentElement)] : [element]);
+  /** How an element cuts what is in it, asked once: a page has far more texts than boxes. */
+  const boxes = new Map<Element, { x: boolean; y: boolean; hides: boolean; scrolls: boolean; floats: boolean; outer: DOMRect }>();
+  const boxOf = (element: Element) => {
+    const known = boxes.get(element);
+    if (known) return known;
+    const { overflowX, overflowY, overflow, clipPath, position, contain } = getComputedStyle(element);
+    const cuts = (way: string): boolean => way === 'hidden' || way === 'clip' || /paint|strict|content/.test(contain);
+    const box = {
+      x: cuts(overflowX), y: cuts(overflowY), hides: clipPath !== 'none' || (element.clientWidth <= 1 && overflow === 'hidden'),
+      scrolls: ['auto', 'scroll'].includes(overflowX) && element.scrollWidth > element.clientWidth,
+      floats: position === 'fixed' || position === 'sticky' || element.matches('dialog, [popover], [role=dialog]'), outer: element.getBoundingClientRect(),
+    };
+    boxes.set(element, box);
+    return box;
+  };
   const name = (element: Element): string => `${element.tagName.toLowerCase()}${typeof element.className === 'string' && element.className ? `.${element.className.split(' ')[0]}` : ''}`;
-  const layerOf = (element: Element): string => {
-    const floats = ancestors(element).find((one) => ['fixed', 'sticky'].includes(getComputedStyle(one).position) || one.matches('dialog, [popover], [role=dialog]'));
+  const layerOf = (chain: readonly Element[]): string => {
+    const floats = chain.find((one) => boxOf(one).floats);
     return floats ? `${name(floats)} ${floats.id}` : '';
   };
-  /** Where the box of an ancestor that doesn't scroll ends; null: it shows whatever reaches beyond it. */
-  const clip = (element: Element): { x: boolean; y: boolean } => {
-    const { overflowX, overflowY } = getComputedStyle(element);
-    return { x: overflowX === 'hidden' || overflowX === 'clip', y: overflowY === 'hidden' || overflowY === 'clip' };
+  const pen = document.createElement('canvas').getContext('2d')!;
+  /** Of a chosen option with its padding, px: the browser doesn't say whether it shows it whole. */
+  const textWidth = (text: string, field: Element): number => {
+    const { font, paddingLeft, paddingRight } = getComputedStyle(field);
+    pen.font = font;
+    return pen.measureText(text).width + parseFloat(paddingLeft) + parseFloat(paddingRight);
   };
-  const scrolls = (element: Element): boolean => ['auto', 'scroll'].includes(getComputedStyle(element).overflowX) && element.scrollWidth > element.clientWidth;
   const result: Drawn = { texts: [], marks: [], cut: [] };
   const walker = document.createTreeWalker(document.body, NodeFilter.SHOW_TEXT);
   for (let node = walker.nextNode(); node; node = walker.nextNode()) {
@@ -62,7 +78,7 @@ function drawn(): Drawn {
     const text = node.textContent?.trim() ?? '';
     if (!parent || text === '' || parent.closest('script, style, noscript, select') || !shown(parent)) continue;
     const chain = ancestors(parent);
-    if (chain.some((one) => getComputedStyle(one).clipPath !== 'none' || (one.clientWidth <= 1 && getComputedStyle(one).overflow === 'hidden'))) continue;
+    if (chain.some((one) => boxOf(one).hides)) continue;
     const range = document.createRange();
     range.selectNodeContents(node);
     const half = (parseFloat(getComputedStyle(parent).fontSize) * CAPITALS) / 2;
@@ -72,21 +88,22 @@ function drawn(): Drawn {
       let seen = true;
       let whole = true;
       for (const one of chain) {
-        const { x, y } = clip(one);
-        const outer = one.getBoundingClientRect();
+        const { x, y, outer } = boxOf(one);
         if (x && (box.right <= outer.left || box.left >= outer.right)) seen = false;
         if (y && (box.bottom <= outer.top || box.top >= outer.bottom)) seen = false;
         if (x && (box.left < outer.left - 1 || box.right > outer.right + 1)) whole = false;
         if (y && (box.top < outer.top - 1 || box.bottom > outer.bottom + 1)) whole = false;
       }
       if (!seen) continue;
-      const scrolled = chain.some(scrolls);
+      const scroller = chain.findIndex((one) => boxOf(one).scrolls);
       if (!whole) result.cut.push(`“${text}” in ${name(parent)} is cut`);
-      else if (!scrolled && (box.left < -1 || box.right > document.documentElement.clientWidth + 1)) result.cut.push(`“${text}” in ${name(parent)} leaves the screen`);
-      result.texts.push({ what: `“${text}”`, layer: layerOf(parent) + (scrolled ? chain.findIndex(scrolls) : ''), box });
+      else if (scroller < 0 && (box.left < -1 || box.right > document.documentElement.clientWidth + 1)) result.cut.push(`“${text}” in ${name(parent)} leaves the screen`);
+      result.texts.push({ what: `“${text}”`, layer: `${layerOf(chain)} ${scroller < 0 ? '' : [...boxes.keys()].indexOf(chain[scroller]!)}`, box });
     }
   }
   for (const field of document.querySelectorAll('input, select, textarea')) {
+    const chosen = field instanceof HTMLSelectElement ? field.selectedOptions[0]?.text : undefined;
+    if (chosen && shown(field) && textWidth(chosen, field) > field.clientWidth - 1) result.cut.push(`select “${chosen}” is cut`);
     if (shown(field) && field.scrollWidth > field.clientWidth + 1) result.cut.push(`${name(field)} “${(field as HTMLInputElement).value}” is cut`);
   }
   const marks = [...document.querySelectorAll(MARKS)].filter(shown);

@@ -48,7 +48,7 @@ describe('heights and bars', () => {
   it('the parts fill the bank, and the lane never vanishes', () => {
     const h = heightsOf(640, deskFace(27, numberSize(27)));
     expect(h.cap + h.deck + h.lane + h.approach + 2 * (h.bar + h.barGap) + 4).toBe(640);
-    expect(heightsOf(120, wallFace(113, 1)).lane).toBe(96);
+    expect(heightsOf(120, wallFace(113, 1)).lane).toBe(60);
     expect(heightsOf(200, wallFace(113, 4)).bank).toBeLessThanOrEqual(205);
   });
   it('a bar spans its lanes in this bank only', () => {

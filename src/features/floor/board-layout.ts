@@ -125,7 +125,7 @@ export const deskFace = (strip: number, figure: number): Face => ({
  */
 export const wallFace = (figure: number, banks: number): Face =>
   banks <= 2
-    ? { cap: 84, deck: 48, approach: Math.round(figure * 0.7 + 22), bar: 36, rows: 2, minLane: 96 }
+    ? { cap: 84, deck: 48, approach: Math.round(figure * 0.7 + 22), bar: 36, rows: 2, minLane: 60 }
     : { cap: 58, deck: 0, approach: Math.round(figure * 0.7 + 14), bar: 26, rows: 1, minLane: 14 };
 
 /** Splits the height of a bank; the lane takes what the rest leaves. */

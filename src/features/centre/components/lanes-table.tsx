@@ -45,11 +45,11 @@ function Lane({ lane, edits }: { lane: LaneSettings; edits: boolean }) {
     <tr>
       <Td><LaneBadge lane={lane.lane} size={18} /></Td>
       <Td>
-        <Select aria-label={settingsWords.familyOf(lane.lane)} disabled={disabled} value={lane.family} options={LANE_FAMILIES.map((f) => [f, settingsText.family[f]])} onChange={(event) => save.mutate({ family: LANE_FAMILIES.find((f) => f === event.target.value) })} />
+        <Select className="min-w-max" aria-label={settingsWords.familyOf(lane.lane)} disabled={disabled} value={lane.family} options={LANE_FAMILIES.map((f) => [f, settingsText.family[f]])} onChange={(event) => save.mutate({ family: LANE_FAMILIES.find((f) => f === event.target.value) })} />
         <Refused>{sentenceOf(save.error)}</Refused>
       </Td>
       <Td>
-        <Select aria-label={settingsWords.coverageOf(lane.lane)} disabled={disabled} value={lane.stopCoverage} options={STOP_COVERAGES.map((c) => [c, settingsText.stopCoverage[c]])} onChange={(event) => save.mutate({ stopCoverage: STOP_COVERAGES.find((c) => c === event.target.value) })} />
+        <Select className="min-w-max" aria-label={settingsWords.coverageOf(lane.lane)} disabled={disabled} value={lane.stopCoverage} options={STOP_COVERAGES.map((c) => [c, settingsText.stopCoverage[c]])} onChange={(event) => save.mutate({ stopCoverage: STOP_COVERAGES.find((c) => c === event.target.value) })} />
       </Td>
       <Td>
         <Input key={lane.certifiedUntil ?? ''} type="date" aria-label={settingsWords.certifiedOf(lane.lane)} disabled={disabled} defaultValue={lane.certifiedUntil ?? ''} onBlur={(event) => {
