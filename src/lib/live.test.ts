@@ -11,6 +11,9 @@ describe('how live the screen is', () => {
   it('a cut link is said after two seconds, not before', () => {
     expect([at(12_000, { cut: 10_100 }), at(12_100, { cut: 10_100 })]).toEqual(['live', 'reconnecting']);
   });
+  it('a database that is said to be away is stale sooner: the server noticed late', () => {
+    expect([at(15_900, { database: 'away' }), at(16_000, { database: 'away' })]).toEqual(['reconnecting', 'stale']);
+  });
   it('a server that never answered becomes stale too', () => {
     expect([at(100, { good: null }), at(5000, { good: null }), at(9600, { good: null })]).toEqual(['starting', 'reconnecting', 'stale']);
   });

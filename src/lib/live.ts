@@ -10,6 +10,8 @@ export type Liveness = { state: 'starting' | 'live' | 'reconnecting' | 'stale'; 
 export const RECONNECTING_AFTER_MS = 4000;
 export const CUT_SHOWN_AFTER_MS = 2000;
 export const STALE_AFTER_MS = 9000;
+/** The same where the server itself says that the database is away: it noticed that up to two seconds late. */
+export const AWAY_AFTER_MS = 6000;
 
 interface Heard {
   /** Monotonic ms of the last good word, of the cut (null: connected), and of the start. */
@@ -24,7 +26,7 @@ interface Heard {
 export function livenessOf(heard: Heard, now: number): Liveness {
   const silence = now - (heard.good ?? heard.start);
   const rest = { since: heard.since, database: heard.database };
-  if (silence >= STALE_AFTER_MS) return { state: 'stale', ...rest };
+  if (silence >= (heard.database === 'away' ? AWAY_AFTER_MS : STALE_AFTER_MS)) return { state: 'stale', ...rest };
   const cutShown = heard.cut !== null && now - heard.cut >= CUT_SHOWN_AFTER_MS;
   if (cutShown || silence >= RECONNECTING_AFTER_MS) return { state: 'reconnecting', ...rest };
   return { state: heard.good === null ? 'starting' : 'live', ...rest };
