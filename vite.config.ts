@@ -26,7 +26,6 @@ export default defineConfig({
         globalSetup: ['tests/support/global-setup.ts'],
         testTimeout: 180_000,
         hookTimeout: 180_000,
-        fileParallelism: false,
         sequence: { groupOrder: 1 },
       }),
     ],
