@@ -1,0 +1,65 @@
+import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { systemClock } from '#server/platform/clock.ts';
+import { DESK, openBrowser, PHONE, seriousFindings, type TestBrowser, WALL } from '#tests/support/browser.ts';
+import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
+import { busyHouse, type BusyHouse } from '#tests/support/floor-house.ts';
+import { layoutFaults } from '#tests/support/layout-faults.ts';
+import { startServer, type TestServer } from '#tests/support/server.ts';
+
+let database: TestDatabase;
+let server: TestServer;
+let browser: TestBrowser;
+let house: BusyHouse;
+
+beforeAll(async () => {
+  database = await freshDatabase();
+  server = await startServer({ db: database.db, clock: systemClock });
+  browser = await openBrowser();
+  house = await busyHouse(server, 32);
+});
+afterEach(() => browser.closePages());
+afterAll(async () => {
+  await browser.close();
+  await server.close();
+  await database.close();
+});
+
+/** Where each page is, and a heading that stands when its data has come. */
+const PAGES: [name: string, path: () => string, stands: RegExp][] = [
+  ['sign-in', () => '/sign-in', /^Sign in to your centre$/],
+  ['calls', () => house.at('/calls'), /waits? for a mechanic|open|danger/i],
+  ['call', () => house.at(`/calls/${house.call}`), /^Deck jam$/],
+  ['runs', () => house.at('/runs'), /run|lane/i],
+  ['patterns', () => house.at('/patterns'), /pattern/i],
+  ['pattern', () => house.at('/patterns/house'), /House/],
+  ['readiness', () => house.at('/readiness'), /ready|risk/],
+  ['session', () => house.at(`/readiness/${house.late.session}`), /^Night Owls$/],
+  ['leagues', () => house.at('/leagues'), /league/i],
+  ['league', () => house.at(`/leagues/${house.late.league}`), /^Night Owls$/],
+  ['a new league', () => house.at('/leagues/new'), /^A new league$/],
+  ['numbers', () => house.at('/numbers'), /lane/i],
+  ['settings', () => house.at('/settings'), /^How Tarn Ferry Bowl is set up$/],
+];
+
+/** What is read on a phone in the dark of the house: there axe looks again. */
+const AT_THE_LANES = ['calls', 'call', 'runs', 'readiness', 'session'];
+
+describe('no text is cut, nothing overlaps, and axe finds nothing serious', () => {
+  it.each(PAGES)('%s', async (name, path, stands) => {
+    const page = await browser.page(server.url, name === 'sign-in' ? null : house.manager, { ...DESK, reducedMotion: 'reduce' });
+    await page.goto(path());
+    await page.getByRole('heading', { level: 1, name: stands }).waitFor();
+    await page.getByRole('status').filter({ hasText: /loading|working out/i }).first().waitFor({ state: 'detached' });
+    for (const { viewport } of [DESK, WALL, PHONE]) {
+      for (const colorScheme of ['light', 'dark'] as const) {
+        await page.setViewportSize(viewport);
+        await page.emulateMedia({ colorScheme });
+        const where = `${viewport.width}×${viewport.height} ${colorScheme}`;
+        expect(await layoutFaults(page), where).toEqual([]);
+        expect(await page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth), where).toBeLessThanOrEqual(0);
+        const audited = viewport === DESK.viewport ? colorScheme === 'light' : viewport === PHONE.viewport && colorScheme === 'dark' && AT_THE_LANES.includes(name);
+        if (audited) expect(await seriousFindings(page), where).toEqual([]);
+      }
+    }
+  });
+});
