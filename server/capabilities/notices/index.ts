@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto';
-import type { Knex } from 'knex';
 import type { Clock } from '#server/platform/clock.ts';
+import type { Database } from '#server/platform/db/database.ts';
 import type { Logger } from '#server/platform/log.ts';
 import type { Postman } from '#server/platform/mail/postman.ts';
 import { dueMails, insertMail, markFailed, markSent } from './store.ts';
@@ -17,7 +17,7 @@ export interface Mail {
 
 export interface Notices {
   /** Writes a letter in the caller's transaction, one row a recipient; false when it had been written. */
-  queueMail(trx: Knex, mail: Mail): Promise<boolean>;
+  queueMail(trx: Database, mail: Mail): Promise<boolean>;
   /** Sends what is due. A crash between sending and marking sends the letter again under the same Message-ID. */
   sendDue(now: number): Promise<number>;
 }
@@ -34,7 +34,7 @@ export function messageId({ centreId, key, to }: Pick<Mail, 'centreId' | 'key' |
 }
 
 /** `postman` null: no mail server is set; letters wait in the outbox. */
-export function createNotices({ db, clock, log }: { db: Knex; clock: Clock; log: Logger }, postman: Postman | null): Notices {
+export function createNotices({ db, clock, log }: { db: Database; clock: Clock; log: Logger }, postman: Postman | null): Notices {
   return {
     queueMail: (trx, mail) => insertMail(trx, mail.centreId, mail.key, messageId(mail), mail, clock.now()),
     async sendDue(now) {

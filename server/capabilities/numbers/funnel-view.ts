@@ -6,15 +6,15 @@ import { funnel, funnelCount } from '#shared/domain/numbers/funnel.ts';
 import { rateOf } from '#shared/domain/numbers/night/figures.ts';
 import { counting } from '#shared/domain/numbers/night/stops.ts';
 import { laneWords } from '#shared/text/en/numbers-words.ts';
+import type { Database } from '#server/platform/db/database.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
-import type { Knex } from 'knex';
 import { laneWeeks } from './read-model.ts';
 
 const NIGHTS = 56;
 const CURVE_POINTS = 60;
 
 /** Machine stops of each lane over the last eight weeks against its own frames. Calls are counted on lanes whose frames are heard. */
-export async function funnelOf(db: Knex, centre: CentreRef, now: number): Promise<FunnelView> {
+export async function funnelOf(db: Database, centre: CentreRef, now: number): Promise<FunnelView> {
   const today = businessDayAt(now, centre.zone, centre.cut);
   const from = businessDay(addDays(today.date, -NIGHTS), centre.zone, centre.cut);
   const { frames, calls } = await laneWeeks(db, centre, { from: from.from, to: today.from });

@@ -1,16 +1,16 @@
-import type { Knex } from 'knex';
 import { addDays, type BusinessDay, businessDay, instantOfWall, weekdayOf } from '#shared/domain/business-day.ts';
 import { neighbourOf } from '#shared/domain/equipment.ts';
 import { type NightFigures, nightFigures } from '#shared/domain/numbers/night/figures.ts';
 import type { NightInput } from '#shared/domain/numbers/night/input.ts';
 import type { Span } from '#shared/domain/numbers/spans.ts';
+import type { Database } from '#server/platform/db/database.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import type { Ledger } from '#server/platform/journal/ledger.ts';
 import { nightRows } from './read-model.ts';
 import type { NumbersSources } from './sources.ts';
 
 export interface NightDeps {
-  db: Knex;
+  db: Database;
   ledger: Ledger;
   sources: NumbersSources;
 }

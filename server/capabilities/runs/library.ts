@@ -1,4 +1,4 @@
-import type { Knex } from 'knex';
+import type { Database } from '#server/platform/db/database.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import { machinesOf, patternsOf, revisionsOf, type Machine, type Pattern, type Revision } from './store.ts';
 
@@ -12,7 +12,7 @@ export interface Library {
 const TRUST_MS = 2_000;
 
 /** Remembers each centre's library for two seconds, or until this process changes it. */
-export function createLibraries(db: Knex) {
+export function createLibraries(db: Database) {
   const kept = new Map<string, { until: number; library: Promise<Library> }>();
   const load = async (id: Buffer): Promise<Library> => {
     const [patterns, revisions, machines] = await Promise.all([patternsOf(db, id), revisionsOf(db, id), machinesOf(db, id)]);

@@ -1,4 +1,3 @@
-import type { Knex } from 'knex';
 import type { RevisionBody } from '#shared/contracts/runs.ts';
 import { validatePattern } from '#shared/domain/runs/rules.ts';
 import { conflict, notFound, Refusal } from '#server/platform/http/refusal.ts';
@@ -30,7 +29,7 @@ export function addPattern(ledger: Ledger, centre: CentreRef, given: Written & {
     if ((await patternsOf(trx, centre.id)).some((p) => p.code === given.code)) throw conflict('pattern.code-taken', { pattern: given.code });
     return {
       facts: [], topics: ['patterns'], result: () => undefined,
-      write: async (tx: Knex.Transaction) => {
+      write: async (tx) => {
         await insertPattern(tx, centre.id, { code: given.code, name: given.name }, now);
         await insertRevision(tx, centre.id, { code: given.code, revision: 1, body: given.revision, note: given.note, by: given.by, at: now });
       },
@@ -48,7 +47,7 @@ export function revisePattern(ledger: Ledger, centre: CentreRef, given: Written)
     if (JSON.stringify(canonical(newest.body)) === JSON.stringify(canonical(given.revision))) throw conflict('pattern.unchanged', { revision: newest.revision });
     return {
       facts: [], topics: ['patterns'], result: () => undefined,
-      write: async (tx: Knex.Transaction) => {
+      write: async (tx) => {
         await insertRevision(tx, centre.id, { code: given.code, revision: newest.revision + 1, body: given.revision, note: given.note, by: given.by, at: now });
       },
     };
@@ -65,7 +64,7 @@ function canonical(value: unknown): unknown {
 export function addMachine(ledger: Ledger, centre: CentreRef, machine: Machine): Promise<void> {
   return ledger.decide(centre, (_house, now) => ({
     facts: [], topics: ['settings'], result: () => undefined,
-    write: async (tx: Knex.Transaction) => {
+    write: async (tx) => {
       if (!(await insertMachine(tx, centre.id, machine, now))) throw conflict('machine.code-taken', { machine: machine.code });
     },
   }));

@@ -4,6 +4,9 @@ import knex, { type Knex } from 'knex';
 type Field = { type: string; length: number; string(): string | null };
 
 /** What one caller may want otherwise. */
+/** The database, or a transaction in it, for what only passes it on: queries stand in stores and read models. */
+export type Database = Knex;
+
 export type DatabaseOptions = {
   /** Connections at most; a unit of work holds one, a query outside it another. */
   connections?: number;

@@ -6,7 +6,8 @@ import { Refusal } from '../http/refusal.ts';
 import type { CentreRef } from '../http/route.ts';
 import { readHead } from './head-store.ts';
 import type { HouseAt } from './ledger.ts';
-import { houseAt, type Memory } from './memory.ts';
+import { houseAt } from './memory.ts';
+import type { Memory } from './remembered.ts';
 import { performUnit } from './unit.ts';
 import type { Work } from './work.ts';
 

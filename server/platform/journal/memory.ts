@@ -7,15 +7,7 @@ import { type Head, readCheckpoints } from './head-store.ts';
 import { readFacts } from './journal-store.ts';
 import type { HouseAt } from './ledger.ts';
 import { rebuilt } from './rebuild.ts';
-
-/** What a process remembers of a centre: true at one sequence number. Never changed in place. */
-export interface Memory {
-  seq: number;
-  epoch: string;
-  days: Days;
-  /** When a fact last came for an earlier day than the newest, by received time. */
-  lateAt: number;
-}
+import type { Memory } from './remembered.ts';
 
 export const houseAt = (memory: Memory): HouseAt => ({ state: houseOf(memory.days), seq: memory.seq, epoch: memory.epoch });
 

@@ -8,7 +8,7 @@ import { applied, begun, type Days, firstDays, lastOf } from './days.ts';
 import { type Head, saveCheckpoints, saveHead } from './head-store.ts';
 import { groupedBy } from './grouped.ts';
 import { readFacts } from './journal-store.ts';
-import type { Memory } from './memory.ts';
+import type { Memory } from './remembered.ts';
 import { changesBetween, PROJECTIONS, writeChanges } from './projection/changes.ts';
 
 /** Journal read at once, ms of event time: a fortnight of a busy house is some 300,000 facts. */

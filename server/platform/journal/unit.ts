@@ -9,7 +9,8 @@ import { lockHead, saveCheckpoints, saveHead, saveOutbox } from './head-store.ts
 import { decided, entered } from './journal-rows.ts';
 import { append, eventKey, known } from './journal-store.ts';
 import type { Decision, DeviceEntry, EntryResult, HouseAt } from './ledger.ts';
-import { earlierDays, type Memory, upToDate } from './memory.ts';
+import { earlierDays, upToDate } from './memory.ts';
+import type { Memory } from './remembered.ts';
 import { changesBetween, writeChanges } from './projection/changes.ts';
 import { mend } from './set-aside-store.ts';
 import type { JournalRow } from './tables.ts';
