@@ -24,6 +24,8 @@ const BECAUSE: Record<PlanCode, (params: Params, clock: Clock) => string> = {
   'late.pattern-change': (p) => `Changing to pattern ${text(p, 'pattern')} takes ${duration(count(p, 'ms'))}.`,
   'late.product-change': (p) => `Changing to product ${text(p, 'product')} takes ${duration(count(p, 'ms'))}.`,
   'late.service': (p) => `${text(p, 'service') === 'charge' ? 'Charging' : 'Refilling'} takes ${duration(count(p, 'ms'))}.`,
+  'late.travel': (p) => `Getting machine ${text(p, 'machine')} there takes ${duration(count(p, 'ms'))}.`,
+  'late.dressing': (p) => `Dressing these lanes with machine ${text(p, 'machine')} takes ${duration(count(p, 'ms'))}.`,
   'block.no-machine': (p) => `No machine here can lay pattern ${text(p, 'pattern')}.`,
   'block.exceeds-store': (p) =>
     `Machine ${text(p, 'machine')} holds ${amount(text(p, 'store'), count(p, 'holds'))} of ${STORE[text(p, 'store')] ?? text(p, 'store')}, these lanes need ${amount(text(p, 'store'), count(p, 'need'))}: plan fewer lanes in one go.`,

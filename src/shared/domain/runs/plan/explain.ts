@@ -64,6 +64,8 @@ function wayCosts(problem: Problem, input: PlanInput, machine: MachineData, stop
   machine.services.forEach((service, k) => {
     if ((stop.step.services >> k) & 1) found.push({ code: 'late.service', params: { ms: service.seconds * 1000, service: service.id } });
   });
+  const travel = i32(machine.travel, (stop.last + 1) * problem.n + stop.step.block);
+  if (travel > 0) found.push({ code: 'late.travel', params: { ms: travel * 1000, machine: machine.id } });
   const setup = setupSeconds(problem, machine, stop.last, stop.step.block, stop.step.services);
   if (stop.ready > stop.leave + setup) found.push({ code: 'late.machine-away', params: { machine: machine.id, until: problem.now + (stop.ready - setup) * 1000 } });
   return found;
@@ -82,6 +84,8 @@ function chain(problem: Problem, input: PlanInput, machine: MachineData, stops: 
     because.push(...wayCosts(problem, input, machine, stop));
   }
   if (machine.available > 0) because.push({ code: 'late.machine-available-at', params: { machine: machine.id, at: problem.now + machine.available * 1000 } });
+  const stop = at(stops, from);
+  if (because.length === 0) because.push({ code: 'late.dressing', params: { machine: machine.id, ms: (stop.end - stop.start) * 1000 } });
   return because;
 }
 

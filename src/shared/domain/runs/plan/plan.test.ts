@@ -39,7 +39,7 @@ describe('the run plan', () => {
     const plan = makePlan(input([block('early', [1, 2, 3, 4, 5, 6, 7, 8], 30, 60), block('late', [21, 22, 23, 24], 30, 62, { pattern: 'sport' })]));
     expect(plan.criteria.sessionsLate).toBe(1);
     const [late] = plan.late;
-    expect(late?.because.map((e) => e.code)).toEqual(['late.pattern-change', 'late.waits-for-block', 'late.lanes-free-at']);
+    expect(late?.because.map((e) => e.code)).toEqual(['late.pattern-change', 'late.travel', 'late.waits-for-block', 'late.lanes-free-at']);
     expect(late?.because.at(-1)?.params).toEqual({ block: 'early', lane: 1, at: at(30) });
     const alone = makePlan(input([block('a', [1, 2, 3, 4], 50, 60)]));
     expect(alone.late).toEqual([{ session: 's-a', byMs: 3 * MIN, because: [{ code: 'late.even-alone', params: { session: 's-a' } }, { code: 'late.lanes-free-at', params: { block: 'a', lane: 1, at: at(50) } }] }]);

@@ -81,6 +81,8 @@ export function makePlan(input: PlanInput): Plan {
     return { ...empty, proven: { sessionsLate: true, lateness: true, freshness: true, travel: true } };
   }
   const problem = compile(screened.input);
+  const placeable = screened.input.blocks.every((_, b) => problem.machines.some((machine) => machine.work[b]));
+  if (!placeable) return unsolved(screened.input, screened.unplanned);
   const bound = lowerBound(problem);
   const solved = problem.n <= EXACT_BLOCKS ? exactly(problem, bound) : heuristically(problem, screened.input, bound);
   if (!solved) return unsolved(screened.input, screened.unplanned);
