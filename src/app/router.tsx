@@ -17,6 +17,10 @@ const SignInPage = page(() => import('../features/accounts/index.ts'), 'SignInPa
 const calls = () => import('../features/calls/index.ts');
 const CallsPage = page(calls, 'CallsPage');
 const CallPage = page(calls, 'CallPage');
+const runs = () => import('../features/runs/index.ts');
+const RunsPage = page(runs, 'RunsPage');
+const PatternsPage = page(runs, 'PatternsPage');
+const PatternPage = page(runs, 'PatternPage');
 const NumbersPage = page(() => import('../features/numbers/index.ts'), 'NumbersPage');
 const SettingsPage = page(() => import('../features/centre/index.ts'), 'SettingsPage');
 const readiness = () => import('../features/readiness/index.ts');
@@ -41,6 +45,9 @@ export function Router() {
             <Route path="floor" element={<FloorPage />} />
             <Route path="calls" element={<CallsPage />} />
             <Route path="calls/:call" element={<CallPage />} />
+            <Route path="runs" element={<RunsPage />} />
+            <Route path="patterns" element={<PatternsPage />} />
+            <Route path="patterns/:code" element={<PatternPage />} />
             <Route path="readiness" element={<ReadinessPage />} />
             <Route path="readiness/:session" element={<SessionPage />} />
             <Route path="leagues" element={<LeaguesPage />} />

@@ -1,0 +1,3 @@
+export { PatternPage } from './pattern-page.tsx';
+export { PatternsPage } from './patterns-page.tsx';
+export { RunsPage } from './runs-page.tsx';
