@@ -1,3 +1,4 @@
+import type { CodeParams, Sentences } from './sentences.ts';
 import type { CannotLay, CannotLayCode } from '../../domain/runs/capability.ts';
 import type { Explanation, Plan, PlanCode, PlannedBlock } from '../../domain/runs/plan/model.ts';
 import type { PatternProblem, PatternProblemCode } from '../../domain/runs/rules.ts';
@@ -110,3 +111,9 @@ const PATTERN: Record<PatternProblemCode, (params: Params) => string> = {
 
 /** A contradiction in a pattern, with its place: `Pass 3: the range crosses itself …` */
 export const patternProblemText = (problem: PatternProblem): string => capital(`${where(problem.place)}${PATTERN[problem.code](problem.params ?? {})}`);
+
+/** The same sentences by code, for refusals that stand beside the field of their pass. */
+export const ruleSentences: Sentences = Object.fromEntries([
+  ...Object.entries(CANNOT).map(([code, say]) => [code, (params: CodeParams) => capital(`${say(params)}.`)] as const),
+  ...Object.entries(PATTERN).map(([code, say]) => [code, (params: CodeParams) => capital(say(params))] as const),
+]);

@@ -1,7 +1,6 @@
-import { feet, plural } from './formats.ts';
+import { plural } from './formats.ts';
+import { ruleSentences } from './plan.ts';
 import type { Sentences } from './sentences.ts';
-
-const between = ({ min, max }: Readonly<Record<string, string | number>>): string => (min === undefined ? '' : max === undefined ? ` It must be ${min} or more.` : ` It must lie between ${min} and ${max}.`);
 
 export const refusals: Sentences = {
   'machine.unknown': ({ machine }) => `The centre has no lane machine “${machine}”.`,
@@ -21,44 +20,5 @@ export const refusals: Sentences = {
   'run.end-in-future': () => 'The end lies in the future. Plan the run instead.',
   'run.too-old': () => 'That is more than seven days ago; such a run can’t be recorded any more.',
   'run.date-invalid': () => 'That is no date. Write it as 2026-05-14.',
-  'machine.cannot-oil': () => 'It lays no conditioner.',
-  'machine.cannot-clean': () => 'It doesn’t clean.',
-  'machine.no-deck-treatment': () => 'It has no deck treatment.',
-  'machine.product-not-carried': ({ product }) => `It carries no product ${product ?? 'of that name'}.`,
-  'machine.one-volume-only': ({ ul }) => `It lays one volume a board only${ul === undefined ? '' : `, ${ul} µL`}.`,
-  'machine.volume-out-of-range': () => 'A load’s volume lies outside what it can lay.',
-  'machine.volume-step': () => 'A load’s volume lies between its steps.',
-  'machine.board-out-of-reach': () => 'A board lies outside its oil head’s reach.',
-  'machine.length-too-long': () => 'The pattern is longer than it can travel with oil.',
-  'machine.into-tail-off': () => 'A pass oils feet in which it only buffs.',
-  'machine.too-many-passes': () => 'More passes than it keeps.',
-  'machine.too-many-loads': () => 'More loads than it can lay.',
-  'machine.buffer-speed': () => 'It hasn’t that buffer speed.',
-  'machine.travel-speed': () => 'It hasn’t that travel speed.',
-  'machine.cleaner-ratio': () => 'It can’t mix that cleaner ratio.',
-  'machine.cleaner-zones': () => 'More cleaner zones than it keeps.',
-  'pattern.length-out-of-range': (p) => `No pattern is that long.${between(p)} Lengths are in feet from the foul line.`,
-  'pattern.no-passes': () => 'A pattern needs at least one pass.',
-  'pattern.too-many-passes': (p) => `Too many passes.${between(p)}`,
-  'pass.direction-unknown': () => 'A pass goes outbound or returns.',
-  'pass.outbound-after-return': () => 'An outbound pass can’t follow a return pass.',
-  'pass.product-missing': () => 'Say which product the pass lays: A or B.',
-  'pass.board-out-of-range': () => 'A lane has 39 boards: from 1 to 39, counted from either channel.',
-  'pass.boards-crossed': () => 'The range crosses itself: its left board lies right of its right one.',
-  'pass.feet-out-of-range': (p) => `These feet lie off the lane.${between(p)}`,
-  'pass.feet-beyond-length': () => 'The pass goes beyond the pattern’s length.',
-  'pass.feet-against-direction': () => 'An outbound pass counts its feet up, a return pass counts them down.',
-  'pass.feet-empty': () => 'The pass begins and ends on the same foot.',
-  'pass.into-tail-off': () => 'The pass oils feet in which machines only buff.',
-  'pass.loads-out-of-range': (p) => `Loads are whole numbers.${between(p)}`,
-  'pass.load-volume-out-of-range': (p) => `Too little or too much for one load.${between(p)}`,
-  'pass.speed-out-of-range': (p) => `No machine travels at that speed.${between(p)}`,
-  'pass.rpm-out-of-range': (p) => `No buffer turns at that speed.${between(p)}`,
-  'zone.feet-out-of-range': (p) => `The zone lies off the lane.${between(p)}`,
-  'zone.feet-reversed': () => 'The zone ends before it begins.',
-  'zone.overlap': () => 'Two cleaner zones overlap.',
-  'zone.ratio-out-of-range': (p) => `No such cleaner ratio.${between(p)}`,
-  'zone.volume-out-of-range': (p) => `Too much cleaner a foot.${between(p)}`,
+  ...ruleSentences,
 };
-
-export const lengthText = (ft: number | null): string => (ft === null ? '–' : feet(ft));
