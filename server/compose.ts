@@ -47,13 +47,13 @@ export function compose(deps: Deps, postman: Postman | null, ingestRate?: Rate):
   const centre = createCentre(deps);
   const notices = createNotices(deps, postman);
   const ingest = createIngest(deps, { centre }, ingestRate);
-  // A pattern says who wants it, a league says what it may want: each is asked when the other needs it.
-  const runs: Runs = createRuns(deps, (house) => leagues.patternUsers(house));
+  // Runs ask who wants a pattern and which lanes wait; leagues and readiness ask what there is to want: each when it needs the other.
+  const runs: Runs = createRuns(deps, { usedBy: (house) => leagues.patternUsers(house), wants: (...night) => readiness.dressingWanted(...night) });
   const leagues = createLeagues(deps, { patternsOf: async (house) => patternNames(await runs.library(house)) });
   const accounts = createAccounts(deps, { leaguesOf: leagues.leagueIds });
   const managers = (house: CentreRef) => accounts.emails(house, ['manager']);
   const calls = createCalls(deps, { centre, notices, managers });
-  const readiness = createReadiness(deps, { centre, leagues, notices, runs });
+  const readiness: Readiness = createReadiness(deps, { centre, leagues, notices, runs });
   const numbers = createNumbers(deps, {
     sessions: async (house, from, to) => (await leagues.sessionsBetween(house, from, to)).map(sessionNight),
     readyAtWarmUp: async (house, from, to) => {

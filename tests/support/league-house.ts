@@ -7,8 +7,8 @@ import type { PatternRevision } from '#shared/domain/runs/pattern.ts';
 import { createCentre } from '#server/capabilities/centre/index.ts';
 import { createLeagues, patternNames } from '#server/capabilities/leagues/index.ts';
 import { createNotices } from '#server/capabilities/notices/index.ts';
-import { createReadiness } from '#server/capabilities/readiness/index.ts';
-import { createRuns } from '#server/capabilities/runs/index.ts';
+import { createReadiness, type Readiness } from '#server/capabilities/readiness/index.ts';
+import { createRuns, type Runs } from '#server/capabilities/runs/index.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import { createLedger } from '#server/platform/journal/create-ledger.ts';
 import { createLog } from '#server/platform/log.ts';
@@ -43,9 +43,9 @@ export async function leagueHouse({ db }: TestDatabase, clock: FixedClock) {
   const ledger = createLedger({ db, clock });
   const centres = createCentre({ db, ledger, log, clock });
   const notices = createNotices({ db, clock, log }, null);
-  const runs = createRuns({ db, ledger }, (centre) => leagues.patternUsers(centre));
+  const runs: Runs = createRuns({ db, ledger }, { usedBy: (centre) => leagues.patternUsers(centre), wants: (...night) => readiness.dressingWanted(...night) });
   const leagues = createLeagues({ db, ledger }, { patternsOf: async (centre) => patternNames(await runs.library(centre)) });
-  const readiness = createReadiness({ db, ledger, clock, config }, { centre: centres, leagues, notices, runs });
+  const readiness: Readiness = createReadiness({ db, ledger, clock, config }, { centre: centres, leagues, notices, runs });
   leagues.onChanged(readiness.forget);
   const web = await startWeb(db, { clock, routes: [...leagues.routes, ...readiness.routes, ...runs.routes], leaguesOf: leagues.leagueIds });
 

@@ -206,6 +206,7 @@ export const SAMPLES: Readonly<Record<string, Sample>> = {
   'runs.machines': () => ({}),
   'runs.addMachine': (house) => ({ body: { code: `machine-${house.next()}`, name: 'Second', capabilities: CAN } }),
   'runs.list': () => ({ query: { date: '2026-05-14' } }),
+  'runs.tonight': () => ({}),
   'runs.plan': (house) => ({ body: plan(house) }),
   'runs.record': (house) => ({
     body: { run: `made-${house.next()}`, machine: 'm1', pattern: 'owls', startedAt: house.clock.now() - 600_000, finishedAt: house.clock.now() - 300_000, lanes: [{ lane: 3, outcome: 'dressed' }, { lane: 4, outcome: 'skipped', reason: 'In play' }] },

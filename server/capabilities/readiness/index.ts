@@ -1,13 +1,16 @@
 import type { SessionBar } from '#shared/contracts/floor.ts';
 import type { House } from '#shared/domain/house/state.ts';
+import { businessDayAt } from '#shared/domain/business-day.ts';
+import { dressingWanted } from '#shared/domain/readiness/dressing-wanted.ts';
 import { DEFAULT_READINESS } from '#shared/domain/readiness/settings.ts';
+import type { DressingWant } from '#shared/domain/runs/tonight.ts';
 import type { Deps } from '#server/deps.ts';
 import type { CentreRef, Route } from '#server/platform/http/route.ts';
 import { readinessCommands } from './commands.ts';
 import { type ReadyAtWarmUp, readinessReadModel } from './read-model.ts';
 import { readinessRoutes } from './routes.ts';
 import { readinessScreen } from './screen.ts';
-import { type ReadinessSources, recordsOf } from './sources.ts';
+import { type ReadinessSources, recordsOf, surroundings } from './sources.ts';
 import { readinessStore as store } from './store.ts';
 import { watcher } from './watch.ts';
 
@@ -24,6 +27,8 @@ export interface Readiness {
   watch(centre: CentreRef, now: number, options?: { mail: boolean }): Promise<number>;
   /** The same for every centre. */
   watchAll(now: number): Promise<void>;
+  /** Lanes that sessions of this night still want dressed, and how long before warm-up they are to be ready, ms. */
+  dressingWanted(centre: CentreRef, house: House, now: number): Promise<{ wants: DressingWant[]; marginMs: number }>;
   /** Sessions or leagues of a centre were changed: what is remembered of them is read anew. */
   forget(centre: CentreRef): void;
 }
@@ -44,6 +49,11 @@ export function createReadiness({ db, ledger, clock, config }: Pick<Deps, 'db' |
     watch,
     async watchAll(now) {
       for (const centre of await sources.centre.all()) await watch(centre, now);
+    },
+    async dressingWanted(centre, house, now) {
+      const until = businessDayAt(now, centre.zone, centre.cut).to;
+      const around = surroundings(house, await records(centre, now, until), now);
+      return { wants: dressingWanted(around, until), marginMs: around.settings.dressMarginMs };
     },
     forget: screen.forget,
   };

@@ -8,7 +8,7 @@ import type { CentreRef, Route } from '#server/platform/http/route.ts';
 import { createLibraries, type Library, revisionIn } from './library.ts';
 import { machineLevels } from './machines.ts';
 import { addMachine, addPattern, revisePattern } from './patterns.ts';
-import { runsRoutes, type UsedBy } from './routes.ts';
+import { type RunsSources, runsRoutes } from './routes.ts';
 import { runBar } from './view.ts';
 
 export { revisionIn } from './library.ts';
@@ -27,8 +27,8 @@ export interface Runs {
   revisePattern(centre: CentreRef, pattern: { code: string; revision: PatternRevision; by: string }): Promise<void>;
 }
 
-/** Patterns, lane machines and runs. `usedBy` says which leagues want a pattern. */
-export function createRuns(deps: Pick<Deps, 'db' | 'ledger'>, usedBy: UsedBy): Runs {
+/** Patterns, lane machines and runs. */
+export function createRuns(deps: Pick<Deps, 'db' | 'ledger'>, sources: RunsSources): Runs {
   const libraries = createLibraries(deps.db);
   const changed = async (centre: CentreRef, change: Promise<void>): Promise<void> => {
     await change;
@@ -36,7 +36,7 @@ export function createRuns(deps: Pick<Deps, 'db' | 'ledger'>, usedBy: UsedBy): R
   };
   const body = (revision: PatternRevision) => ({ ...revision, passes: revision.passes.map((p) => ({ ...p })), cleanerZones: revision.cleanerZones?.map((z) => ({ ...z })) });
   return {
-    routes: runsRoutes(deps, libraries, usedBy),
+    routes: runsRoutes(deps, libraries, sources),
     library: (centre) => libraries.of(centre),
     async patterns(centre) {
       const library = await libraries.of(centre);

@@ -12,19 +12,23 @@ import type { createLibraries, Library } from './library.ts';
 import { machineLevels } from './machines.ts';
 import { addMachine, addPattern, revisePattern } from './patterns.ts';
 import { lanesDressed, runByKey, runsWithin } from './read-model.ts';
+import { tonightView, type WantsOfNight } from './tonight.ts';
 import { patternSummary, revisionView, runDetail } from './view.ts';
 
 type Libraries = ReturnType<typeof createLibraries>;
 type RunsDeps = Pick<Deps, 'db' | 'ledger'>;
-export interface UsedBy {
-  (centre: CentreRef): Promise<Map<string, string[]>>;
+/** What runs ask of the slices that want lanes dressed; compose.ts joins their front doors to it. */
+export interface RunsSources {
+  /** Names of the leagues that want a pattern, by its code. */
+  usedBy: (centre: CentreRef) => Promise<Map<string, string[]>>;
+  wants: WantsOfNight;
 }
 
-export const runsRoutes = (deps: RunsDeps, libraries: Libraries, usedBy: UsedBy): Route[] => [
-  ...patternRoutes(deps, libraries, usedBy), ...machineRoutes(deps, libraries), ...runRoutes(deps, libraries),
+export const runsRoutes = (deps: RunsDeps, libraries: Libraries, sources: RunsSources): Route[] => [
+  ...patternRoutes(deps, libraries, sources.usedBy), ...machineRoutes(deps, libraries), ...runRoutes(deps, libraries, sources.wants),
 ];
 
-function patternRoutes({ ledger }: RunsDeps, libraries: Libraries, usedBy: UsedBy): Route[] {
+function patternRoutes({ ledger }: RunsDeps, libraries: Libraries, usedBy: RunsSources['usedBy']): Route[] {
   const detail = async (centre: CentreRef, code: string) => {
     const library = await libraries.of(centre);
     const pattern = library.patterns.find((p) => p.code === code);
@@ -79,7 +83,7 @@ function machineRoutes({ db, ledger }: RunsDeps, libraries: Libraries): Route[] 
 /** The record's arrays are read-only in the domain; an answer has its own. */
 const copy = <T>(value: T): never => structuredClone(value) as never;
 
-function runRoutes({ db, ledger }: RunsDeps, libraries: Libraries): Route[] {
+function runRoutes({ db, ledger }: RunsDeps, libraries: Libraries, wants: WantsOfNight): Route[] {
   const shown = async (centre: CentreRef, state: House, key: string) => {
     const run = state.runs.active[key] ?? state.runs.ended.findLast((r) => r.key === key) ?? (await runByKey(db, centre.id, key));
     if (!run) throw notFound('run.unknown');
@@ -104,6 +108,10 @@ function runRoutes({ db, ledger }: RunsDeps, libraries: Libraries): Route[] {
       const live = query.date === undefined ? Object.values(state.runs.active).filter((r) => !past.some((p) => p.key === r.key)) : [];
       const begin = (run: (typeof past)[number]): number => run.startedAt ?? run.plannedStart ?? run.lastAt;
       return { date: day.date, runs: [...past, ...live].sort((a, b) => begin(a) - begin(b)).map((run) => runDetail(run, state.runs, library)) };
+    }),
+    serve(c.tonight, async ({ centre, now }) => {
+      const [{ state }, library] = await Promise.all([ledger.read(centre), libraries.of(centre)]);
+      return tonightView(state, library, await wants(centre, state, now), now);
     }),
     serve(c.plan, ({ centre, body, actor }) => decide(centre, (house, library, now) => planRun(house, library, body, personOf(actor), now))),
     serve(c.record, ({ centre, body, actor }) => decide(centre, (house, library, now) => recordRun(house, library, body, personOf(actor), now))),

@@ -21,7 +21,7 @@ const volumeView = (revision: PatternRevision) => {
 };
 
 export function patternSummary(pattern: Pattern, newest: Revision, usedBy: string[]) {
-  return { code: pattern.code, name: pattern.name, revision: newest.revision, lengthFt: newest.body.lengthFt, volume: volumeView(newest.body), usedBy };
+  return { code: pattern.code, name: pattern.name, revision: newest.revision, lengthFt: newest.body.lengthFt, volume: volumeView(newest.body), boardsNl: boardProfile(filmMap(newest.body)), usedBy };
 }
 
 /** A revision with all that is computed from it: volumes, film by board and foot, ratio, exit board, who can lay it. */

@@ -60,11 +60,10 @@ function Side({ pattern, revision, onChoose }: { pattern: PatternDetail; revisio
   return (
     <>
       <Facts>
-        <Fact term="A">{millilitres(revision.volume.aUl)}</Fact>
-        <Fact term="B">{millilitres(revision.volume.bUl)}</Fact>
+        {([['A', revision.volume.aUl], ['B', revision.volume.bUl]] as const).filter(([, ul]) => ul > 0).map(([product, ul]) => <Fact key={product} term={`${text.conditioner} ${product}`}>{millilitres(ul)}</Fact>)}
+        {revision.exitBoard === null ? null : <Fact term={text.exit}>{revision.exitBoard}</Fact>}
         <Fact term={`${text.ratio}, ${text.left}`}>{ratioText(revision.ratio.left)}</Fact>
         <Fact term={`${text.ratio}, ${text.right}`}>{ratioText(revision.ratio.right)}</Fact>
-        {revision.exitBoard === null ? null : <Fact term={text.exit}>{revision.exitBoard}</Fact>}
       </Facts>
       <p className="mt-1 text-sm text-dim">{text.ratioNote}</p>
       {revision.exitBoard === null ? null : <p className="text-sm text-dim">{text.exitNote}</p>}

@@ -1,14 +1,14 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { Link, useNavigate } from 'react-router-dom';
-import { feet, millilitres } from '#shared/text/en/formats.ts';
+import { feet } from '#shared/text/en/formats.ts';
 import { patternsText as text } from '#shared/text/en/runs-page.ts';
 import { useCentre } from '../../lib/centre.ts';
 import { sentenceOf } from '../../lib/refusal.ts';
 import { Button } from '../../ui/button.tsx';
 import { Sheet } from '../../ui/dialog.tsx';
 import { EmptyState, Page, Skeleton } from '../../ui/page.tsx';
-import { Table, Td, Th } from '../../ui/table.tsx';
+import { FilmProfile } from './components/film-picture.tsx';
 import { PatternForm } from './components/pattern-form.tsx';
 import { patternsQuery } from './queries.ts';
 
@@ -22,18 +22,20 @@ export function PatternsPage() {
   return (
     <Page title={text.title(data.patterns.length)} actions={may('pattern.edit') ? <Button kind="primary" onClick={() => setAdding(true)}>{text.add}</Button> : null}>
       {data.patterns.length === 0 ? <EmptyState title={text.none}>{text.noneMore}</EmptyState> : (
-        <Table caption={text.title(data.patterns.length)}>
-          <thead><tr><Th>{text.name}</Th><Th number>{text.length}</Th><Th number>{text.volume}</Th><Th number>{text.revision}</Th><Th>{text.usedBy}</Th></tr></thead>
-          <tbody>
-            {data.patterns.map((p) => (
-              <tr key={p.code}>
-                <Td><Link className="type-name underline decoration-rule underline-offset-4" to={`/${slug}/patterns/${p.code}`}>{p.name}</Link></Td>
-                <Td number>{feet(p.lengthFt)}</Td><Td number>{millilitres(p.volume.totalUl)}</Td><Td number>{p.revision}</Td>
-                <Td className="text-dim">{p.usedBy.length === 0 ? text.nobody : p.usedBy.join(', ')}</Td>
-              </tr>
-            ))}
-          </tbody>
-        </Table>
+        <ul className="border-b border-rule">
+          {data.patterns.map((p) => (
+            <li key={p.code} className="border-t border-rule">
+              <Link className="grid grid-cols-[8.5rem_minmax(0,1fr)] items-center gap-x-6 gap-y-1 py-3 hover:bg-card min-[901px]:grid-cols-[10rem_14rem_minmax(0,1fr)]" to={`/${slug}/patterns/${p.code}`}>
+                <FilmProfile boardsNl={p.boardsNl} className="w-full" />
+                <span>
+                  <strong className="type-name block text-[1.0625rem]">{p.name}</strong>
+                  <span className="text-dim">{`${feet(p.lengthFt)} · ${text.aLane(p.volume.totalUl)} · ${text.revision.toLowerCase()} ${p.revision}`}</span>
+                </span>
+                <span className="text-dim max-[900px]:col-span-2">{text.wantedBy(p.usedBy)}</span>
+              </Link>
+            </li>
+          ))}
+        </ul>
       )}
       <Sheet open={adding} onClose={() => setAdding(false)} title={text.add}>
         <PatternForm code={null} start={null} onSaved={(code) => void navigate(`/${slug}/patterns/${code}`)} />

@@ -32,7 +32,7 @@ const capabilities = z.object({
 
 const reason = z.object({ code: z.string(), pass: z.optional(z.int()), zone: z.optional(z.int()), params: z.record(z.string(), z.union([z.string(), z.number()])) });
 const volume = z.object({ aUl: z.int(), bUl: z.int(), totalUl: z.int() });
-export const patternSummary = z.object({ code, name: z.string(), revision: z.int(), lengthFt: z.number(), volume, usedBy: z.array(z.string()) });
+export const patternSummary = z.object({ code, name: z.string(), revision: z.int(), lengthFt: z.number(), volume, /** Film by board 1–39 from the left, nL. */ boardsNl: z.array(z.int()), usedBy: z.array(z.string()) });
 export const patternDetail = z.extend(patternSummary, {
   revisions: z.array(z.object({
     revision: z.int(), at: instant, by: z.string(), note: z.nullable(z.string()), body: revisionBody, volume,
@@ -52,6 +52,23 @@ export const runDetail = z.extend(runBar, {
   })),
 });
 export type RunDetail = z.infer<typeof runDetail>;
+
+const because = z.array(z.object({ code: z.string(), params: z.record(z.string(), z.union([z.string(), z.number()])) }));
+const tonight = z.object({
+  at: instant, /** False: no lane machine is known, or more than three. */ possible: z.boolean(),
+  blocks: z.array(z.object({
+    id: z.string(), /** Key of the run that somebody planned; null: nobody has yet. */ run: z.nullable(z.string()),
+    session: z.nullable(z.object({ id: z.string(), name: z.string(), warmUpAt: instant })), machine: code, pattern: z.string(), revision: z.nullable(z.int()), lanes: z.array(laneNumber),
+    startAt: instant, endAt: instant, /** Begun later, `breaksFirst` isn’t ready by its warm-up. */ startBy: z.nullable(instant), breaksFirst: z.nullable(z.string()), freeUnknown: z.array(laneNumber),
+  })),
+  unplanned: z.array(z.object({ session: z.string(), lanes: z.array(laneNumber), because })),
+  late: z.array(z.object({ session: z.string(), byMs: z.number(), because })),
+  proof: z.object({
+    method: z.enum(['exact', 'heuristic']), proven: z.object({ sessionsLate: z.boolean(), lateness: z.boolean(), freshness: z.boolean(), travel: z.boolean() }),
+    criteria: z.object({ sessionsLate: z.int(), latenessMs: z.number(), freshnessLostMs: z.number(), travelMs: z.number(), changes: z.int() }), bound: z.object({ sessionsLate: z.int(), latenessMs: z.number() }),
+  }),
+});
+export type TonightView = z.infer<typeof tonight>;
 
 const at = '/api/centres/:centre';
 const lanes = z.array(laneNumber).check(z.minLength(1), z.maxLength(99));
@@ -80,6 +97,9 @@ export const runContracts = {
   list: contract({
     id: 'runs.list', method: 'GET', path: `${at}/runs`, permission: 'run.see', summary: 'Runs of a business date, and those planned or under way', params: centreParams, query: z.object({ date: z.optional(date) }),
     response: z.object({ date, runs: z.array(runDetail) }), refusals: ['run.date-invalid'],
+  }),
+  tonight: contract({
+    id: 'runs.tonight', method: 'GET', path: `${at}/runs/tonight`, permission: 'run.see', summary: 'What sessions of tonight still want dressed: by which machine, from when, by when at the latest', params: centreParams, response: tonight,
   }),
   plan: contract({
     id: 'runs.plan', method: 'POST', path: `${at}/runs/planned`, permission: 'run.record', summary: 'Plan a run: machine, pattern, lanes in order, start', params: centreParams, status: 201,

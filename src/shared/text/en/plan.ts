@@ -28,6 +28,7 @@ const BECAUSE: Record<PlanCode, (params: Params, clock: Clock) => string> = {
   'late.travel': (p) => `Getting machine ${text(p, 'machine')} there takes ${duration(count(p, 'ms'))}.`,
   'late.dressing': (p) => `Dressing these lanes with machine ${text(p, 'machine')} takes ${duration(count(p, 'ms'))}.`,
   'block.no-machine': (p) => `No machine here can lay pattern ${text(p, 'pattern')}.`,
+  'block.no-pattern': () => 'The session names no pattern: choose one and plan its run by hand.',
   'block.exceeds-store': (p) =>
     `Machine ${text(p, 'machine')} holds ${amount(text(p, 'store'), count(p, 'holds'))} of ${STORE[text(p, 'store')] ?? text(p, 'store')}, these lanes need ${amount(text(p, 'store'), count(p, 'need'))}: plan fewer lanes in one go.`,
   'pins.conflict': () => 'What was set by hand contradicts itself: no order keeps all of it. Free one of the set starts or orders.',

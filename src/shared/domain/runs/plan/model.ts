@@ -139,7 +139,7 @@ export interface Explanation {
 export type PlanCode =
   | 'late.even-alone' | 'late.waits-for-block' | 'late.lanes-free-at' | 'late.machine-available-at' | 'late.machine-away'
   | 'late.lanes-closed' | 'late.pinned-start' | 'late.pattern-change' | 'late.product-change' | 'late.service' | 'late.travel' | 'late.dressing'
-  | 'block.no-machine' | 'block.exceeds-store' | 'pins.conflict' | 'stores.run-out';
+  | 'block.no-machine' | 'block.no-pattern' | 'block.exceeds-store' | 'pins.conflict' | 'stores.run-out';
 
 export interface LateSession {
   session: string;
