@@ -7,6 +7,8 @@ import { type NightKey, wallInstant, words } from '../../server/fakes/gateway/ti
 import type { DemoDoors } from './doors.ts';
 
 const AT_ONCE = 900;
+/** The watch looks so long before a warm-up for the last time, and at it freezes what it saw. */
+const LAST_LOOK_MS = 1000;
 /** Loading waits for a busy machine: nobody looks on yet. */
 const PATIENCE = { deadlineMs: 60_000 };
 
@@ -24,8 +26,9 @@ export interface Gateways {
 /** Tells one night through the same door as every gateway, with the mechanics' answers, and the look at readiness as each league warms up. */
 export async function tellNight(doors: DemoDoors, centre: CentreRef, gateways: Gateways, mechanics: readonly Person[], told: Told): Promise<void> {
   const { night, until } = told;
-  const warmUps = leaguesOn(weekdayOf(night.date)).map((l) => wallInstant(night, l.start - WARM_UP_MINUTES) - 1000);
-  const moments = [...new Set([...warmUps.filter((at) => at < until), until])].sort((a, b) => a - b);
+  const warmUps = leaguesOn(weekdayOf(night.date)).map((l) => wallInstant(night, l.start - WARM_UP_MINUTES));
+  const looks = warmUps.flatMap((at) => [at - LAST_LOOK_MS, at]);
+  const moments = [...new Set([...looks.filter((at) => at < until), until])].sort((a, b) => a - b);
   let from = -Infinity;
   for (const at of moments) {
     await send(doors, centre, gateways, told.events.filter((e) => e.time > from && e.time <= at), at);

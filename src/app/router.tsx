@@ -13,7 +13,9 @@ function page<M, K extends keyof M>(load: () => Promise<M>, name: K) {
   return lazy(async () => ({ default: (await patient(load))[name] as ComponentType }));
 }
 
-const SignInPage = page(() => import('../features/accounts/index.ts'), 'SignInPage');
+const accounts = () => import('../features/accounts/index.ts');
+const SignInPage = page(accounts, 'SignInPage');
+const AccountPage = page(accounts, 'AccountPage');
 const calls = () => import('../features/calls/index.ts');
 const CallsPage = page(calls, 'CallsPage');
 const CallPage = page(calls, 'CallPage');
@@ -53,6 +55,7 @@ export function Router() {
             <Route path="leagues" element={<LeaguesPage />} />
             <Route path="leagues/:league" element={<LeaguePage />} />
             <Route path="numbers/:date?" element={<NumbersPage />} />
+            <Route path="account" element={<AccountPage />} />
             <Route path="settings" element={<SettingsPage />} />
             <Route path="*" element={<NotFound />} />
           </Route>

@@ -7,6 +7,8 @@ export interface CentreHere {
   name: string;
   /** IANA time zone. */
   zone: string;
+  /** Minutes after midnight at which its business day begins. */
+  cut: number;
   role: Role;
   /** The user's own id and name; null for a display. */
   me: { id: string; name: string } | null;

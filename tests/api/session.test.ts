@@ -35,7 +35,7 @@ describe('signing in', () => {
     expect(cookie).not.toMatch(/Secure/i);
     const me = await ask(web.url, 'GET', '/api/me', { cookie: cookie?.split(';')[0] });
     expect(me.body).toEqual({
-      kind: 'user', id: person.id, name: person.name, email: person.email, centres: [{ slug: centre.slug, name: centre.name, zone: centre.zone, role: 'desk', leagues: [] }],
+      kind: 'user', id: person.id, name: person.name, email: person.email, centres: [{ slug: centre.slug, name: centre.name, zone: centre.zone, cut: centre.cut, role: 'desk', leagues: [] }],
     });
     expect(answer.body).toEqual(me.body);
   });

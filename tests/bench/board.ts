@@ -66,7 +66,7 @@ interface Source {
 /** Speaks what the server speaks to a screen, and nothing else, so that only the screen is measured. */
 async function source(): Promise<Source> {
   const app = express();
-  const me: Identity = { kind: 'user', id: '0190a000-0000-7000-8000-000000000002', name: 'Bench', email: 'bench@house.test', centres: [{ slug: CENTRE, name: 'Bench House', zone: 'UTC', role: 'desk', leagues: [] }] };
+  const me: Identity = { kind: 'user', id: '0190a000-0000-7000-8000-000000000002', name: 'Bench', email: 'bench@house.test', centres: [{ slug: CENTRE, name: 'Bench House', zone: 'UTC', cut: 240, role: 'desk', leagues: [] }] };
   const began = Date.now();
   let [seq, round, on] = [1, 0, false];
   app.get('/api/me', (_, response) => void response.json(me));

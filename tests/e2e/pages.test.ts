@@ -38,6 +38,7 @@ const PAGES: [name: string, path: () => string, stands: RegExp][] = [
   ['league', () => house.at(`/leagues/${house.late.league}`), /^Night Owls$/],
   ['a new league', () => house.at('/leagues/new'), /^A new league$/],
   ['numbers', () => house.at('/numbers'), /lane/i],
+  ['account', () => house.at('/account'), /./],
   ['settings', () => house.at('/settings'), /^How Tarn Ferry Bowl is set up$/],
 ];
 

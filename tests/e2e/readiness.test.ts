@@ -57,9 +57,7 @@ describe('a secretary before the league', () => {
     h = await leagueEvening(server);
     const page = await pageOf(h.secretary, PHONE);
     await page.goto(at('/readiness'));
-    await page.getByRole('heading', { name: 'Night Owls is ready.' }).waitFor();
-    await sound(page);
-    await page.getByRole('link', { name: /Night Owls/ }).click();
+    await page.getByRole('heading', { level: 1, name: 'Night Owls' }).waitFor();
     await page.getByText('All four lanes are as asked.').waitFor();
     await sound(page);
     const confirm = page.getByRole('button', { name: 'Confirm lanes 5–8' });

@@ -5,8 +5,8 @@ import { fromRowTime } from '#server/platform/db/row-times.ts';
 import { fromBinary, toBinary } from '#server/platform/db/uuid.ts';
 
 type Centre = Identity['centres'][number];
-type UserRow = { id: Buffer; name: string; email: string; slug: string | null; centre: string; zone: string; role: MemberRole; league: Buffer | null };
-type LinkRow = { id: Buffer; name: string; seen_at: Date | null; slug: string; centre: string; zone: string };
+type UserRow = { id: Buffer; name: string; email: string; slug: string | null; centre: string; zone: string; cut: number; role: MemberRole; league: Buffer | null };
+type LinkRow = { id: Buffer; name: string; seen_at: Date | null; slug: string; centre: string; zone: string; cut: number };
 type PersonRow = { id: Buffer; name: string; email: string; role: MemberRole; created_at: Date; league: Buffer | null };
 
 /** Who somebody is, and who belongs to a centre: one query each. */
@@ -19,7 +19,7 @@ export function accountReadModel(db: Knex) {
         .leftJoin('membership_league as l', (join) => join.on('l.centre_id', 'm.centre_id').andOn('l.user_id', 'm.user_id'))
         .where('u.id', toBinary(id))
         .orderBy([{ column: 'c.name' }, { column: 'l.league_id' }])
-        .select<UserRow[]>('u.id', 'u.name', 'u.email', 'c.slug', { centre: 'c.name' }, 'c.zone', 'm.role', { league: 'l.league_id' });
+        .select<UserRow[]>('u.id', 'u.name', 'u.email', 'c.slug', { centre: 'c.name', cut: 'c.cut' }, 'c.zone', 'm.role', { league: 'l.league_id' });
       const [first] = rows;
       return first === undefined ? null : { kind: 'user', id, name: first.name, email: first.email, centres: centresOf(rows) };
     },
@@ -30,9 +30,9 @@ export function accountReadModel(db: Knex) {
         .join('centre as c', 'c.id', 'd.centre_id')
         .where('d.token_hash', hashSecret(token))
         .whereNull('d.revoked_at')
-        .first<LinkRow | undefined>('d.id', 'd.name', 'd.seen_at', 'c.slug', { centre: 'c.name' }, 'c.zone');
+        .first<LinkRow | undefined>('d.id', 'd.name', 'd.seen_at', 'c.slug', { centre: 'c.name', cut: 'c.cut' }, 'c.zone');
       if (row === undefined) return null;
-      const centre: Centre = { slug: row.slug, name: row.centre, zone: row.zone, role: 'display', leagues: [] };
+      const centre: Centre = { slug: row.slug, name: row.centre, zone: row.zone, cut: row.cut, role: 'display', leagues: [] };
       return { identity: { kind: 'display', id: fromBinary(row.id), name: row.name, email: null, centres: [centre] }, seenAt: fromRowTime(row.seen_at) };
     },
 
@@ -63,9 +63,9 @@ export function accountReadModel(db: Knex) {
 
 function centresOf(rows: readonly UserRow[]): Centre[] {
   const centres = new Map<string, Centre>();
-  for (const { slug, centre, zone, role, league } of rows) {
+  for (const { slug, centre, zone, cut, role, league } of rows) {
     if (slug === null) continue;
-    const known = centres.get(slug) ?? { slug, name: centre, zone, role, leagues: [] };
+    const known = centres.get(slug) ?? { slug, name: centre, zone, cut, role, leagues: [] };
     if (league !== null) known.leagues.push(fromBinary(league));
     centres.set(slug, known);
   }

@@ -50,6 +50,7 @@ function MenuContent({ me }: { me: Identity }) {
         </nav>
       ) : null}
       {may('settings.see') ? <Link to={`/${slug}/settings`} className="font-[620] underline underline-offset-4">{wording.settings}</Link> : null}
+      <Link to={`/${slug}/account`} className="font-[620] underline underline-offset-4">{wording.ownAccount}</Link>
       <Field label={wording.theme}>
         {(c) => <Select {...c} value={theme} options={THEMES.map((t) => [t, wording.themes[t]])} onChange={(event) => chooseTheme(THEMES.find((t) => t === event.target.value) ?? 'system')} />}
       </Field>

@@ -6,7 +6,7 @@ import type { Identity } from '#shared/contracts/accounts.ts';
 import { appText, wording } from '#shared/text/en/app.ts';
 import { BoardContext, BoardStore } from '../../features/floor/index.ts';
 import { call, isAway, Problem } from '../../lib/api.ts';
-import { CentreContext, type CentreHere } from '../../lib/centre.ts';
+import { CentreContext, type CentreHere, useCentre } from '../../lib/centre.ts';
 import { heardServerTime } from '../../lib/clock.ts';
 import { heardWord, linkStarted } from '../../lib/live.ts';
 import { patient } from '../../lib/patient.ts';
@@ -14,6 +14,7 @@ import { Skeleton } from '../../ui/page.tsx';
 import { ToastRegion } from '../../ui/toast.tsx';
 import { ErrorBoundary } from '../error-boundary.tsx';
 import { NotFound } from '../not-found.tsx';
+import type { PageName } from '../navigation.ts';
 import { connect } from '../realtime.ts';
 import { meQuery } from '../session.ts';
 import { AwayBanner } from './away-banner.tsx';
@@ -36,7 +37,7 @@ function useCentreHere(): { here: CentreHere; me: Identity } | 'loading' | 'sign
   const place = me.data.centres.find((c) => c.slug === centre);
   if (!place) return 'not-found';
   const person = me.data.kind === 'user' ? { id: me.data.id, name: me.data.name } : null;
-  return { here: { slug: place.slug, name: place.name, zone: place.zone, role: place.role, me: person }, me: me.data };
+  return { here: { slug: place.slug, name: place.name, zone: place.zone, cut: place.cut, role: place.role, me: person }, me: me.data };
 }
 
 /** Everything of one centre: its live floor, and the frame around its pages (none around the wall). */
@@ -67,11 +68,16 @@ function Loading() {
   );
 }
 
+const isPage = (page: string): page is PageName => page in wording.nav;
+
 function Framed({ me }: { me: Identity }) {
   const { pathname } = useLocation();
+  const { name } = useCentre();
   const onFloor = /\/floor\/?$/.test(pathname);
+  const page = pathname.split('/')[2] ?? '';
   return (
     <div className={onFloor ? 'flex min-h-dvh flex-col min-[900px]:h-dvh min-[900px]:min-h-[40rem]' : 'flex min-h-dvh flex-col'}>
+      <title>{appText.documentTitle(isPage(page) ? wording.nav[page] : page === 'settings' ? wording.settings : page === 'account' ? wording.account : null, name)}</title>
       <a href="#page" className="sr-only z-50 bg-ink px-4 py-2 text-paper focus:not-sr-only focus:absolute">{wording.skip}</a>
       <Header me={me} />
       <AwayBanner />

@@ -1,1 +1,2 @@
+export { AccountPage } from './account-page.tsx';
 export { SignInPage } from './sign-in-page.tsx';

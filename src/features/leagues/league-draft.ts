@@ -13,9 +13,3 @@ export const newLeague = (today: string, lanes: number): LeagueForm => ({
 export function draftOf({ id: _id, nights: _nights, nextAt: _next, ended: _ended, secretaries: _secretaries, ...form }: LeagueView): LeagueForm {
   return form;
 }
-
-/** Minutes after midnight of `19:05`; null while it isn't a time. */
-export function minutesOf(wall: string): number | null {
-  const match = /^(\d{2}):(\d{2})/.exec(wall);
-  return match ? Number(match[1]) * 60 + Number(match[2]) : null;
-}

@@ -4,7 +4,8 @@ import { Link, useParams } from 'react-router-dom';
 import type { BookingView, LeagueForm, LeagueView } from '#shared/contracts/leagues.ts';
 import { businessDayAt } from '#shared/domain/business-day.ts';
 import { appText } from '#shared/text/en/app.ts';
-import { leagueLine, leaguesText as text, patternLine, secretariesLine, wallTime } from '#shared/text/en/leagues-page.ts';
+import { wallTime } from '#shared/text/en/formats.ts';
+import { leagueLine, leaguesText as text, patternLine, secretariesLine } from '#shared/text/en/leagues-page.ts';
 import { Problem } from '../../lib/api.ts';
 import { useCentre } from '../../lib/centre.ts';
 import { serverNow } from '../../lib/clock.ts';
@@ -23,7 +24,7 @@ import { leagueQuery, leaguesQuery } from './queries.ts';
 /** One league with its season; `new` makes one. Who may not change it sees what it is. */
 export function LeaguePage() {
   const { league: id = '' } = useParams();
-  const { slug, zone, may } = useCentre();
+  const { slug, zone, cut, may } = useCentre();
   const fresh = id === 'new';
   const house = useQuery(leaguesQuery(slug));
   const found = useQuery({ ...leagueQuery(slug, id), enabled: !fresh });
@@ -38,7 +39,7 @@ export function LeaguePage() {
   }
   const { patterns, lanes } = house.data;
   const detail = found.data;
-  if (!detail) return <Editor key="new" id={null} title={text.newTitle} start={newLeague(businessDayAt(serverNow(), zone).date, lanes)} patterns={patterns} sessions={[]} />;
+  if (!detail) return <Editor key="new" id={null} title={text.newTitle} start={newLeague(businessDayAt(serverNow(), zone, cut).date, lanes)} patterns={patterns} sessions={[]} />;
   if (!may('league.edit') || detail.league.ended) return <Shown league={detail.league} sessions={detail.sessions} />;
   return <Editor key={detail.league.id} id={detail.league.id} title={detail.league.name} start={draftOf(detail.league)} patterns={patterns} sessions={detail.sessions} />;
 }

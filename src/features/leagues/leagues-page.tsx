@@ -1,7 +1,8 @@
 import { useQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import type { LeagueView } from '#shared/contracts/leagues.ts';
-import { leagueLine, leaguesText as text, leaguesTitle, seasonLine, secretariesLine, wallTime } from '#shared/text/en/leagues-page.ts';
+import { wallTime } from '#shared/text/en/formats.ts';
+import { leagueLine, leaguesText as text, leaguesTitle, seasonLine, secretariesLine } from '#shared/text/en/leagues-page.ts';
 import { useCentre } from '../../lib/centre.ts';
 import { useTimes } from '../../lib/formats.ts';
 import { sentenceOf } from '../../lib/refusal.ts';

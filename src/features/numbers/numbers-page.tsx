@@ -15,9 +15,9 @@ import { funnelQuery, nightQuery } from './queries.ts';
 
 /** Last night on one page, and which lane is really worse. Without a date: the last night that has ended. */
 export function NumbersPage() {
-  const { slug, zone } = useCentre();
+  const { slug, zone, cut } = useCentre();
   const given = useParams()['date'];
-  const date = given ?? addDays(businessDayAt(serverNow(), zone).date, -1);
+  const date = given ?? addDays(businessDayAt(serverNow(), zone, cut).date, -1);
   const night = useQuery(nightQuery(slug, date));
   const lanes = useQuery(funnelQuery(slug));
   const empty = night.data && night.data.figures.total.deliveries + night.data.figures.total.calls + night.data.figures.total.framesEstimated === 0;

@@ -8,8 +8,9 @@ import { EmptyState, Page, PartTitle, Skeleton } from '../../ui/page.tsx';
 import { SessionRow, UnwatchedRow } from './components/session-row.tsx';
 import { WeightsSheet } from './components/weights-sheet.tsx';
 import { sessionsQuery } from './queries.ts';
+import { OneSession } from './session-page.tsx';
 
-/** Sessions of this business day with their readiness; a secretary sees the own leagues. */
+/** Sessions of this business day with their readiness; a secretary sees the own leagues, one alone at once with all its lanes. */
 export function ReadinessPage() {
   const { slug, role, may } = useCentre();
   const { data, error, refetch } = useQuery(sessionsQuery(slug));
@@ -24,6 +25,8 @@ export function ReadinessPage() {
   const watched = data.sessions.filter((session) => session.kind === 'league' || session.kind === 'tournament');
   const others = data.sessions.filter((session) => !watched.includes(session));
   const own = role === 'secretary';
+  const [first] = watched;
+  if (own && first && watched.length === 1 && others.length === 0) return <OneSession id={first.id} only />;
   return (
     <Page title={readinessTitle(watched)} actions={may('settings.edit') ? <Button kind="secondary" onClick={() => setWeighing(true)}>{text.weights}</Button> : null}>
       {watched.length === 0 ? <EmptyState title={own ? text.noneOwn : text.none}>{own ? text.noneOwnMore : text.noneMore}</EmptyState> : null}

@@ -20,12 +20,17 @@ import { TimeLine } from './components/time-line.tsx';
 import { Word } from './components/word.tsx';
 import { sessionQuery } from './queries.ts';
 
-/** One session until its warm-up: the finding, the way there, every lane; beside it what can be done, and the secretary's word. */
+/** The session of the address. */
 export function SessionPage() {
-  const { slug } = useCentre();
   const { session: id = '' } = useParams();
+  return <OneSession id={id} only={false} />;
+}
+
+/** One session until its warm-up: the finding, the way there, every lane; beside it what can be done, and the secretary's word. `only`: there is no list to go back to. */
+export function OneSession({ id, only }: { id: string; only: boolean }) {
+  const { slug } = useCentre();
   const { data, error, refetch } = useQuery(sessionQuery(slug, id));
-  if (data) return <SessionScreen key={data.id} session={data} />;
+  if (data) return <SessionScreen key={data.id} session={data} only={only} />;
   const gone = error instanceof Problem && [404, 422].includes(error.status);
   return (
     <Page title={gone ? appText.notFound : error ? text.failed : text.loading} lead={gone ? appText.notFoundMore : sentenceOf(error)}>
@@ -41,7 +46,7 @@ export function SessionPage() {
   );
 }
 
-function SessionScreen({ session }: { session: SessionView }) {
+function SessionScreen({ session, only }: { session: SessionView; only: boolean }) {
   const { slug } = useCentre();
   const { time } = useTimes();
   const [raising, setRaising] = useState(false);
@@ -53,7 +58,7 @@ function SessionScreen({ session }: { session: SessionView }) {
     </>
   );
   return (
-    <Page title={session.name} lead={sessionLead(session, time)} aside={aside} actions={<Link className={buttonLook({ kind: 'quiet' })} to={`/${slug}/readiness`}>{text.back}</Link>}>
+    <Page title={session.name} lead={sessionLead(session, time)} aside={aside} actions={only ? null : <Link className={buttonLook({ kind: 'quiet' })} to={`/${slug}/readiness`}>{text.back}</Link>}>
       <Finding session={session} />
       {session.frozen || session.verdict === null ? null : <TimeLine session={session} />}
       {session.lanesSeen.length > 0 ? <LaneTable lanes={session.lanesSeen} /> : null}

@@ -18,7 +18,7 @@ export const identity = z.object({
   id: uuid,
   name: z.string(),
   email: z.nullable(z.string()),
-  centres: z.array(z.object({ slug: z.string(), name: z.string(), zone: z.string(), role: z.enum([...MEMBER_ROLES, 'display']), leagues: z.array(uuid) })),
+  centres: z.array(z.object({ slug: z.string(), name: z.string(), zone: z.string(), /** Minutes after midnight at which its business day begins. */ cut: z.int(), role: z.enum([...MEMBER_ROLES, 'display']), leagues: z.array(uuid) })),
 });
 export type Identity = z.infer<typeof identity>;
 

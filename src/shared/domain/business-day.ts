@@ -57,6 +57,12 @@ export function instantOfWall(date: string, minutes: number, zone: string): Wall
   return { ok: true, instant: earlier.epochMilliseconds, repeated: true };
 }
 
+/** Instant of a wall time of a business day: times before its cut belong to its small hours, on the next date. */
+export function instantOfNight(day: BusinessDay, minutes: number, zone: string): WallTime {
+  const first = instantOfWall(day.date, minutes, zone);
+  return first.ok && first.instant < day.from ? instantOfWall(addDays(day.date, 1), minutes, zone) : first;
+}
+
 /** Local date and minutes after midnight of an instant. */
 export function wallOf(instant: number, zone: string): { date: string; minutes: number } {
   const local = Temporal.Instant.fromEpochMilliseconds(instant).toZonedDateTimeISO(zone);

@@ -9,7 +9,8 @@ import { Button } from '../../../ui/button.tsx';
 import { Field, Input } from '../../../ui/field.tsx';
 import { PartTitle } from '../../../ui/page.tsx';
 import { showToast } from '../../../ui/toast.tsx';
-import { clockOf, minutesOf } from '../minutes.ts';
+import { wallTime } from '#shared/text/en/formats.ts';
+import { minutesOf } from '../../../lib/wall-clock.ts';
 import { useChange } from '../mutations.ts';
 
 interface Draft {
@@ -20,8 +21,8 @@ interface Draft {
 }
 
 const draftOf = ({ name, zone, cut, opening }: CentreSettings): Draft => ({
-  name, zone, cut: clockOf(cut),
-  days: opening.map((day) => ({ open: day !== null, from: clockOf(day?.from ?? 600), to: clockOf(day?.to ?? 0) })),
+  name, zone, cut: wallTime(cut),
+  days: opening.map((day) => ({ open: day !== null, from: wallTime(day?.from ?? 600), to: wallTime(day?.to ?? 0) })),
 });
 const settingsOf = ({ name, zone, cut, days }: Draft): CentreSettings => ({
   name, zone, cut: minutesOf(cut) ?? 0,

@@ -2,7 +2,8 @@ import { type UseFormReturn, useForm } from 'react-hook-form';
 import { useNavigate } from 'react-router-dom';
 import { type LeagueForm as Form, leagueForm } from '#shared/contracts/leagues.ts';
 import { weekdays } from '#shared/text/en/leagues.ts';
-import { leaguesText as text, wallTime } from '#shared/text/en/leagues-page.ts';
+import { wallTime } from '#shared/text/en/formats.ts';
+import { leaguesText as text } from '#shared/text/en/leagues-page.ts';
 import { useCentre } from '../../../lib/centre.ts';
 import { formResolver, showRefusedFields } from '../../../lib/form.ts';
 import { sentenceOf } from '../../../lib/refusal.ts';
@@ -11,7 +12,7 @@ import { Button } from '../../../ui/button.tsx';
 import { Field, Input, Select, Tick } from '../../../ui/field.tsx';
 import { PartTitle } from '../../../ui/page.tsx';
 import { showToast } from '../../../ui/toast.tsx';
-import { minutesOf } from '../league-draft.ts';
+import { minutesOf } from '../../../lib/wall-clock.ts';
 import { useSaveLeague } from '../mutations.ts';
 
 export interface PatternChoice {

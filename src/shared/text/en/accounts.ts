@@ -11,6 +11,12 @@ export const signInText = {
   noAccount: 'No account? The manager of your centre makes one for you.',
 } as const;
 
+export const accountText = {
+  title: 'Your account', loading: 'Fetching where you are signed in', password: 'Password', present: 'Present password', next: 'New password', nextHint: 'Twelve characters or more; several words are easiest to remember.',
+  endsOthers: 'Changing it ends all other sign-ins.', change: 'Change password', changed: 'The password is changed; all other sign-ins have ended.', signIns: 'Where you are signed in', here: 'this browser', end: 'Sign out there',
+  since: (when: string) => `since ${when}`, seen: (when: string) => `last used ${when}`,
+} as const;
+
 export const roleText: Record<Role, string> = { manager: 'Manager', desk: 'Desk', mechanic: 'Mechanic', secretary: 'League secretary', display: 'Display' };
 
 export const refusals: Sentences = {

@@ -9,6 +9,7 @@ export const wording = {
   mainNavigation: 'Main',
   account: 'Account',
   signOut: 'Sign out',
+  ownAccount: 'Password and sign-ins',
   settings: 'Settings',
   more: 'More',
   theme: 'Light or dark',
@@ -48,5 +49,5 @@ export const appText = {
   noCentreMore: 'A manager adds you to a centre; then it appears here.',
   chooseCentre: 'Choose a centre',
   centreAndRole: (centre: string, role: string) => `${centre} · ${role}`,
-  documentTitle: (page: string, centre: string) => `${page} – ${centre} – Lanewright`,
+  documentTitle: (page: string | null, centre: string) => [page, centre, 'Lanewright'].filter(Boolean).join(' – '),
 } as const;

@@ -13,6 +13,8 @@ function formatter(zone: string, options: Intl.DateTimeFormatOptions): Intl.Date
 /** `19:42` */
 export const timeOfDay = (at: number, zone: string): string => formatter(zone, { hour: '2-digit', minute: '2-digit', hourCycle: 'h23' }).format(at);
 /** `19:41:07` */
+/** `19:05` of minutes after midnight; 1440, the end of the day, is 00:00. */
+export const wallTime = (minutes: number): string => `${String(Math.floor((minutes % 1440) / 60)).padStart(2, '0')}:${String(minutes % 60).padStart(2, '0')}`;
 export const timeWithSeconds = (at: number, zone: string): string =>
   formatter(zone, { hour: '2-digit', minute: '2-digit', second: '2-digit', hourCycle: 'h23' }).format(at);
 /** `Thu 14 May` of an instant. */

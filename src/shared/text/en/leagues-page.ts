@@ -27,5 +27,3 @@ export const sessionLanes = (lanes: readonly number[]): string => `lanes ${laneR
 export const cancelLabel = (date: string): string => `Cancel ${dayOfDate(date)}`;
 export const cancelledToast = (date: string): string => `${dayOfDate(date)} is cancelled; its lanes are free.`;
 export const skipLabel = (date: string): string => `Bowls on ${dayOfDate(date)}`;
-/** `19:05` of minutes after midnight. */
-export const wallTime = (minutes: number): string => `${String(Math.floor(minutes / 60)).padStart(2, '0')}:${String(minutes % 60).padStart(2, '0')}`;

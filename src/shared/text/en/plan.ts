@@ -1,6 +1,6 @@
 import type { CodeParams, Sentences } from './sentences.ts';
 import type { CannotLay, CannotLayCode } from '../../domain/runs/capability.ts';
-import type { Explanation, Plan, PlanCode, PlannedBlock } from '../../domain/runs/plan/model.ts';
+import type { Explanation, Plan, PlanCode } from '../../domain/runs/plan/model.ts';
 import type { PatternProblem, PatternProblemCode } from '../../domain/runs/rules.ts';
 import { duration, feet, listed, millilitres, plural } from './formats.ts';
 
@@ -40,10 +40,7 @@ export const planReason = (because: Explanation, clock: Clock): string => BECAUS
 
 export const planText = {
   lateBy: (session: string, byMs: number) => `${session} will be ready ${duration(byMs)} late`,
-  mustStartBy: (name: string, block: Pick<PlannedBlock, 'latestStart'>, clock: Clock) => `${name} must start by ${clock(block.latestStart)}`,
-  breaksFirst: (session: string) => `Later than that, ${session} isn’t ready by its warm-up`,
   unplanned: (name: string) => `${name} can’t be planned`,
-  pinCosts: 'What it costs',
 } as const;
 
 /** How good the plan is known to be. */

@@ -4,11 +4,17 @@ import { lanesText, listed, millilitres, number, plural } from './formats.ts';
 export const runsText = {
   loading: 'Fetching the runs', failed: 'The runs can’t be shown.', retry: 'Try again', nothing: 'No lane is being dressed.', none: 'No run today', noneMore: 'Runs come from the lane machine by itself, or are planned and recorded here.',
   toDress: 'To dress', planThis: 'Plan this run', warmUp: 'warm-up', lanesNotTold: 'lanes not told', freeUnknown: (lanes: readonly number[]) => `Nobody knows when ${lanesText(lanes)} ${lanes.length === 1 ? 'is' : 'are'} free.`,
-  underWay: 'Under way', planned: 'Planned', ended: 'Today', machines: 'Lane machines', plan: 'Plan a run', record: 'Record a run that was made', takeBack: 'Take back', takeBackReason: 'Why',
+  underWay: 'Under way', planned: 'Planned', ended: 'Today', machines: 'Lane machines', plan: 'Plan a run', record: 'Record a run that was made', takeBack: 'Take back',
   unverified: 'pattern unverified', noPattern: 'pattern not told', byHand: 'entered by hand', measured: 'measured', computed: 'computed', run: 'Run', lanes: 'Lanes', outcome: 'Outcome', volume: 'Conditioner',
   finished: 'Done', caution: 'Conditioner and cleaner: read the safety data sheet, wear gloves and eye protection, keep both off approaches: a trace of oil there can injure. Never walk an oiled lane. Follow the maker’s manual.',
-  machine: 'Machine', pattern: 'Pattern', newest: 'Newest revision', anyPattern: 'Not known', lanesHint: 'In the order they are dressed: 25–32, or 19–24, 17', start: 'Start, wall time', startedAt: 'Began', finishedAt: 'Ended', allDressed: 'All dressed',
-  skipped: 'Skipped', broken: 'Machine broke off on', save: 'Plan it', saveRecord: 'Record it', lanesWrong: 'Write lanes as 25–32 or 19–24, 17.', choose: 'Choose a machine', day: 'Night', levelsNone: 'no levels told', pace: (ms: number) => `${number(ms / 60_000, 1)} min a lane`,
+  machine: 'Machine', pattern: 'Pattern', choosePattern: 'Choose a pattern', anyPattern: 'Not known', lanesHint: 'In the order they are dressed: 25–32, or 19–24, 17', start: 'Start, wall time', startedAt: 'Began', finishedAt: 'Ended',
+  skipped: 'Skipped', broken: 'Machine broke off on', save: 'Plan it', saveRecord: 'Record it', noneHint: 'Leave empty for none', choose: 'Choose a machine', levelsNone: 'no levels told', pace: (ms: number) => `${number(ms / 60_000, 1)} min a lane`,
+} as const;
+
+/** What is wrong with a field of the form, before anything is sent. */
+export const runFaults = {
+  'needed': 'This is needed.', 'lanes': 'Write lanes as 25–32 or 19–24, 17.', 'not-of-run': 'Not all of these are lanes of the run.', 'time': 'Write a time as 19:40.',
+  'missing-hour': 'The clocks skip this hour tonight: take another time.',
 } as const;
 
 export const OUTCOMES = { 'dressed': 'dressed', 'skipped': 'skipped', 'broken-off': 'broke off: cleaned and redone' } as const;

@@ -1,6 +1,3 @@
-/** `HH:MM` of minutes after midnight; 1440 is the end of the day, which a time field can't say: 00:00. */
-export const clockOf = (minutes: number): string => `${String(Math.floor((minutes % 1440) / 60)).padStart(2, '0')}:${String(minutes % 60).padStart(2, '0')}`;
-
 /** Minutes after midnight of `HH:MM` or `H:MM`; null when it isn't a time. */
 export function minutesOf(clock: string): number | null {
   const match = /^(\d{1,2}):(\d{2})$/.exec(clock.trim());
