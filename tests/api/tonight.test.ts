@@ -52,6 +52,18 @@ describe('what sessions of tonight still want dressed', () => {
     expect(view.late[0]?.byMs).toBeGreaterThanOrEqual(7 * MIN);
   });
 
+  it('a machine whose median lane took half a millisecond more still gives whole instants everywhere', async () => {
+    const house = await world.house({ certifiedUntil: '2026-12-31' });
+    const { sessions } = await house.league();
+    const begin = clock.now() - 60 * MIN;
+    await house.device('run.started', { machine: 'm1', run: 'odd', pattern: 'owls', revision: 3, lanes: [1, 2] }, begin);
+    for (const [lane, from, to] of [[1, 0, 100_000], [2, 100_000, 200_001]] as const) await house.device('run.lane.dressed', { machine: 'm1', run: 'odd', lane, startedAt: begin + from, finishedAt: begin + to }, begin + to);
+    good(await house.go(house.mechanic, 'POST', '/runs/planned', { machine: 'm1', pattern: 'owls', lanes: [5, 6, 7, 8], startAt: WARM_UP - 30 * MIN }));
+    expect((await house.view(house.manager, sessions[0]?.id ?? '')).verdict).toBe('planned');
+    expect((good(await house.go(house.desk, 'GET', '/runs/tonight')).body as TonightView).blocks).toHaveLength(1);
+    good(await house.go(house.desk, 'GET', '/runs'));
+  });
+
   it('nothing to do where all lanes are as asked', async () => {
     const house = await world.house({ certifiedUntil: '2026-12-31' });
     await house.league();

@@ -4,13 +4,12 @@ import type { Call, CallStatus } from '#shared/domain/calls/state.ts';
 import type { LaneState, Use } from '#shared/domain/floor/state.ts';
 import type { House } from '#shared/domain/house/state.ts';
 import { filmStrength, freshness, hoursBetween } from '#shared/domain/runs/ageing.ts';
+import { paceOf } from '#shared/domain/runs/pace.ts';
 import type { Run } from '#shared/domain/runs/state.ts';
 import type { PatternFacts } from './sources.ts';
 
 /** A lane counts as forgotten open ten minutes after its last delivery. */
 const QUIET_MS = 10 * 60_000;
-/** Time a lane of a machine that has shown no pace of its own yet (common practice: 1.5–2.5 min with moves). */
-const FIRST_PACE_MS = 2 * 60_000;
 
 export interface LaneContext {
   now: number;
@@ -19,7 +18,6 @@ export interface LaneContext {
   pattern: (code: string, revision: number | null) => PatternFacts | undefined;
   /** Ids of gateways that were silent for 90 s. */
   silent: ReadonlySet<string>;
-  paceMs: (machine: string) => number | null;
 }
 
 /** What a screen shows of one lane: state of the lane, its worst call, its film and what is on it. */
@@ -98,10 +96,10 @@ export function laneUnderMachine(run: Run): { lane: number; since: number } | nu
   return lane === undefined ? null : { lane, since: Math.max(run.startedAt, ...ends) };
 }
 
-function dressingOf(lane: number, { house, paceMs }: LaneContext): LaneView['dressing'] {
+function dressingOf(lane: number, { house }: LaneContext): LaneView['dressing'] {
   for (const run of Object.values(house.runs.active)) {
     const at = laneUnderMachine(run);
-    if (at?.lane === lane) return { machine: run.machine, run: run.run, since: at.since, paceMs: Math.round(paceMs(run.machine) ?? FIRST_PACE_MS) };
+    if (at?.lane === lane) return { machine: run.machine, run: run.run, since: at.since, paceMs: paceOf(house.runs, run.machine) };
   }
   return null;
 }

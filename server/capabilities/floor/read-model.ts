@@ -1,7 +1,6 @@
 import type { FloorDelta, FloorSnapshot, LaneView } from '#shared/contracts/floor.ts';
 import { businessDayAt } from '#shared/domain/business-day.ts';
 import type { LaneState } from '#shared/domain/floor/state.ts';
-import { median } from '#shared/domain/numbers/percentiles.ts';
 import type { Topic } from '#shared/realtime/events.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import type { HouseAt } from '#server/platform/journal/ledger.ts';
@@ -53,10 +52,6 @@ async function laneContext(sources: FloorSources, centre: CentreRef, at: HouseAt
   return {
     now, house: at.state, sessions, pattern,
     silent: new Set(gateways.filter((g) => g.silent).map((g) => g.id)),
-    paceMs: (machine) => {
-      const pace = median(at.state.runs.paces[machine] ?? []);
-      return 'value' in pace && pace.value !== null ? pace.value : null;
-    },
   };
 }
 

@@ -1,11 +1,12 @@
 import type { ResponseOf } from '#shared/contracts/contract.ts';
 import type { runContracts } from '#shared/contracts/runs.ts';
 import type { House } from '#shared/domain/house/state.ts';
+import { paceOf } from '#shared/domain/runs/pace.ts';
 import type { Run } from '#shared/domain/runs/state.ts';
 import { type DressingWant, dressingTonight, type NightMachine, type PlannedRun, type Tonight } from '#shared/domain/runs/tonight.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import { type Library, revisionIn } from './library.ts';
-import { paceOf, runBar } from './view.ts';
+import { runBar } from './view.ts';
 
 /** Which lanes sessions of this night still want dressed, and how long before warm-up they are to be ready, ms. */
 export interface WantsOfNight {

@@ -3,17 +3,12 @@ import type { RunBar } from '#shared/contracts/floor.ts';
 import { cannotLay } from '#shared/domain/runs/capability.ts';
 import { exitBoard, filmRatio } from '#shared/domain/runs/film-facts.ts';
 import { boardProfile, filmMap, footProfile } from '#shared/domain/runs/film.ts';
-import { median } from '#shared/domain/numbers/percentiles.ts';
+import { paceOf } from '#shared/domain/runs/pace.ts';
 import type { PatternRevision } from '#shared/domain/runs/pattern.ts';
 import type { Run, RunsState } from '#shared/domain/runs/state.ts';
 import { patternVolume } from '#shared/domain/runs/volume.ts';
 import { type Library, revisionIn } from './library.ts';
 import type { Pattern, Revision } from './store.ts';
-
-/** Time a lane of a machine without a pace of its own yet (common practice: 1.5–2.5 min with moves). */
-export const FIRST_PACE_MS = 2 * 60_000;
-
-export const paceOf = (runs: RunsState, machine: string): number => median(runs.paces[machine] ?? []).value ?? FIRST_PACE_MS;
 
 const volumeView = (revision: PatternRevision) => {
   const volume = patternVolume(revision);

@@ -11,8 +11,9 @@ import { checkPattern } from './checks/pattern.ts';
 import { checkPinsetter } from './checks/pinsetter.ts';
 import { checkRepeatedStops } from './checks/repeated-stops.ts';
 import { checkRunComplete } from './checks/run-complete.ts';
+import { paceOf } from '../runs/pace.ts';
 import { occupantsOf } from './occupancy.ts';
-import { paceOf, runFor } from './run-forecast.ts';
+import { runFor } from './run-forecast.ts';
 import type { ReadinessSettings } from './settings.ts';
 import type { LaneSituation, RunOnLane, Surroundings } from './situation.ts';
 
@@ -38,7 +39,7 @@ export function situationOf(number: number, session: Session, around: Surroundin
     families: session.lanes.flatMap((n) => factsOf.get(n)?.family ?? []),
     calls: callsOf(number, around.calls), repairedAt: repairedAt(number, around.calls),
     occupants: occupantsOf(number, session, around.sessions, around.floor, around.now),
-    run, paceMs: run ? paceOf(run.machine, around.runs, around.settings) : around.settings.usualPaceMs,
+    run, paceMs: run ? paceOf(around.runs, run.machine, around.settings.usualPaceMs) : around.settings.usualPaceMs,
     levels: around.runs.levels, patterns: around.patterns, settings: around.settings,
   };
 }

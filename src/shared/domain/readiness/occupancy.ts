@@ -82,7 +82,7 @@ function ofSession(session: Session, number: number, floor: FloorState, now: num
 
 function ofUse(use: Use, lane: LaneState, now: number): Occupant {
   const left = framesLeft(use, lane);
-  const byFrames = left === null ? null : now + (left / LEAGUE_PACE.usualPace) * MINUTE;
+  const byFrames = left === null ? null : now + Math.round((left / LEAGUE_PACE.usualPace) * MINUTE);
   const endAt = use.until !== null ? Math.max(use.until, now) : byFrames;
   const clear = clearTimeOf(LEAGUE_PACE);
   return {

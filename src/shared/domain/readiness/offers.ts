@@ -5,7 +5,8 @@ import type { Session } from '../leagues/session.ts';
 import type { CheckName, CheckResult } from './check.ts';
 import { deliveriesAtWarmUp } from './checks/film.ts';
 import { type LaneReadiness, laneReadiness, situationOf } from './lane.ts';
-import { lanesLeft, paceOf } from './run-forecast.ts';
+import { paceOf } from '../runs/pace.ts';
+import { lanesLeft } from './run-forecast.ts';
 import { runsAround, type SessionReadiness } from './session.ts';
 import type { LaneSituation, RunOnLane, Surroundings } from './situation.ts';
 
@@ -110,7 +111,7 @@ function dressFirst({ pair, lanes, situations }: Candidate, fromPair: number, se
   const runs = runsAround(session, around);
   return machines.flatMap((machine) => {
     const startAt = Math.max(freeAt, machineFreeAt(machine, runs, around.now));
-    const doneAt = startAt + 2 * paceOf(machine, around.runs, around.settings);
+    const doneAt = startAt + 2 * paceOf(around.runs, machine, around.settings.usualPaceMs);
     const intoOthers = runs.some((run) => run.machine === machine && run.status === 'planned' && run.startAt < doneAt && run.doneAt > startAt);
     return doneAt <= session.warmUpAt && !intoOthers ? [{ kind: 'dress-then-move' as const, fromPair, toPair: pair, machine, startAt, doneAt }] : [];
   }).sort((a, b) => a.doneAt - b.doneAt);

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { anEvening, aRun, MIN, WARM_UP } from '#tests/support/evening.ts';
-import { forecastRuns, lanesLeft, paceOf, runFor } from './run-forecast.ts';
+import { forecastRuns, lanesLeft, runFor } from './run-forecast.ts';
 import { DEFAULT_READINESS } from './settings.ts';
 
 const now = WARM_UP - 60 * MIN;
@@ -10,7 +10,6 @@ const times = (runs: ReturnType<typeof aRun>[], free = new Map<number, number>()
 describe('forecast of runs', () => {
   it('goes lane by lane at the median pace of its machine', () => {
     expect(times([aRun({ plannedStart: now + 10 * MIN })])).toEqual([[5, 10, 12], [6, 12, 14], [7, 14, 16], [8, 16, 18]]);
-    expect(paceOf('M9', anEvening().runs, DEFAULT_READINESS)).toBe(2 * MIN);
   });
 
   it('waits for the pair to be free', () => {

@@ -1,14 +1,8 @@
 import { pairOf } from '../equipment.ts';
-import { median } from '../numbers/percentiles.ts';
+import { paceOf } from '../runs/pace.ts';
 import type { Run, RunsState } from '../runs/state.ts';
 import type { ReadinessSettings } from './settings.ts';
 import type { RunOnLane } from './situation.ts';
-
-/** Time a lane of a machine, with moves, ms: the median of its own recent lanes, or the usual one. */
-export function paceOf(machine: string, runs: RunsState, settings: Pick<ReadinessSettings, 'usualPaceMs'>): number {
-  const middle = median(runs.paces[machine] ?? []);
-  return middle.value ?? settings.usualPaceMs;
-}
 
 /** Lanes of a run that it still has to dress, in order. */
 export function lanesLeft(run: Run): number[] {
@@ -26,7 +20,7 @@ const inOrder = (a: Run, b: Run): number =>
 export function forecastRuns(runs: RunsState, pairFreeAt: ReadonlyMap<number, number>, now: number, settings: ReadinessSettings): RunOnLane[] {
   const free = new Map<string, number>();
   return Object.values(runs.active).sort(inOrder).flatMap((run) => {
-    const pace = paceOf(run.machine, runs, settings);
+    const pace = paceOf(runs, run.machine, settings.usualPaceMs);
     const from = Math.max(free.get(run.machine) ?? 0, beginOf(run, now));
     const lanes = along(run, from, pace, pairFreeAt, now);
     free.set(run.machine, lanes.at(-1)?.doneAt ?? from);
