@@ -62,9 +62,14 @@ function pieceOfUse(view: LaneView, use: NonNullable<LaneView['use']>, lanes: re
 const lookOfPlay = (kind: SessionBar['kind']): Bar['look'] => (kind === 'league' || kind === 'tournament' ? 'league' : 'open');
 const NEXT_LOOK = { 'planned': 'plan', 'at-risk': 'risk', 'held': 'held', 'ready': 'ready' } as const;
 
-/** What each lane has next: its earliest session that is still to come. */
+const byStart = (sessions: readonly SessionBar[]): SessionBar[] => sessions.filter((s) => s.phase === 'next' || s.phase === 'later').sort((a, b) => a.startAt - b.startAt);
+
+/** The earliest session of a lane that is still to come. */
+export const nextSession = (lane: number, sessions: readonly SessionBar[]): SessionBar | null => byStart(sessions).find((s) => lanesOf(s).includes(lane)) ?? null;
+
+/** What each lane has next. */
 export function nextBars(lanes: number, sessions: readonly SessionBar[], zone: string): Bar[] {
-  const coming = sessions.filter((s) => s.phase === 'next' || s.phase === 'later').sort((a, b) => a.startAt - b.startAt);
+  const coming = byStart(sessions);
   const held = new Map(coming.map((s) => [s.id, new Set(lanesOf(s))]));
   return join(lanes, (lane) => {
     const session = coming.find((s) => held.get(s.id)?.has(lane));

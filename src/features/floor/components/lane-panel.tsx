@@ -9,7 +9,8 @@ import { useCentre } from '../../../lib/centre.ts';
 import { useTimes } from '../../../lib/formats.ts';
 import { IconButton } from '../../../ui/button.tsx';
 import { LaneBadge } from '../../../ui/marks.tsx';
-import { useLane } from '../board-context.ts';
+import { nextSession } from '../bars.ts';
+import { useBoard, useLane } from '../board-context.ts';
 import { markOf } from '../lane-mark.ts';
 import type { LaneMode } from '../use-lane-selection.ts';
 import { LaneActs } from './lane-acts.tsx';
@@ -89,6 +90,7 @@ function LaneFacts({ view }: { view: LaneView }) {
   const { time, dayAndTime } = useTimes();
   const { film } = view;
   const day = 86_400_000;
+  const next = nextSession(view.lane, useBoard('sessions') ?? []);
   const rows: [string, string][] = [[laneWords.facts.machine, laneWords.machine[view.machine]]];
   if (view.progress) rows.push([laneWords.facts.progress, laneWords.progress(view.progress.game, view.progress.frame)]);
   if (view.dressing) rows.push([laneWords.facts.film, laneWords.beingDressed(view.dressing.run, time(view.dressing.since))]);
@@ -99,6 +101,7 @@ function LaneFacts({ view }: { view: LaneView }) {
     rows.push([laneWords.facts.dressed, Math.abs(Date.now() - film.at) > day / 2 ? dayAndTime(film.at) : time(film.at)]);
     rows.push([laneWords.facts.deliveries, view.hearsDeliveries || film.deliveries > 0 ? number(film.deliveries) : laneWords.notHeard]);
   } else rows.push([laneWords.facts.film, view.brokenOff ? boardWords.redo[0] : laneWords.filmUnknown]);
+  if (next) rows.push([laneWords.facts.next, laneWords.next(next.name, time(next.warmUpAt))]);
   return (
     <dl className="grid grid-cols-[auto_minmax(0,1fr)] gap-x-5 border-y border-rule py-2 text-[0.9375rem]">
       {rows.map(([term, value]) => (
