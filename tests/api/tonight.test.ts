@@ -56,12 +56,20 @@ describe('what sessions of tonight still want dressed', () => {
     const house = await world.house({ certifiedUntil: '2026-12-31' });
     const { sessions } = await house.league();
     const begin = clock.now() - 60 * MIN;
-    await house.device('run.started', { machine: 'm1', run: 'odd', pattern: 'owls', revision: 3, lanes: [1, 2] }, begin);
-    for (const [lane, from, to] of [[1, 0, 100_000], [2, 100_000, 200_001]] as const) await house.device('run.lane.dressed', { machine: 'm1', run: 'odd', lane, startedAt: begin + from, finishedAt: begin + to }, begin + to);
+    const lanes = [9, 10, 11, 12, 1, 2, 3, 4];
+    await house.device('run.started', { machine: 'm1', run: 'odd', pattern: 'owls', revision: 3, lanes }, begin);
+    for (const [i, lane] of lanes.entries()) {
+      const [startedAt, finishedAt] = [begin + i * 100_000, begin + (i + 1) * 100_000 + (i > 3 ? i - 3 : 0)];
+      await house.device('run.lane.dressed', { machine: 'm1', run: 'odd', lane, startedAt, finishedAt }, finishedAt);
+    }
     good(await house.go(house.mechanic, 'POST', '/runs/planned', { machine: 'm1', pattern: 'owls', lanes: [5, 6, 7, 8], startAt: WARM_UP - 30 * MIN }));
     expect((await house.view(house.manager, sessions[0]?.id ?? '')).verdict).toBe('planned');
     expect((good(await house.go(house.desk, 'GET', '/runs/tonight')).body as TonightView).blocks).toHaveLength(1);
     good(await house.go(house.desk, 'GET', '/runs'));
+    // 4 loads × 37 boards × 50 µL = 7.4 mL a lane: 10 mL are short on the second.
+    await house.device('machine.levels', { machine: 'm1', tankAMl: 10 });
+    const { runsOut } = good(await house.go(house.desk, 'GET', '/runs/tonight')).body as TonightView;
+    expect(runsOut).toEqual([{ machine: 'm1', store: 'tankA', lane: 6, shortUl: 4800 }]);
   });
 
   it('nothing to do where all lanes are as asked', async () => {

@@ -4,7 +4,7 @@ import type { Call, CallStatus } from '#shared/domain/calls/state.ts';
 import type { LaneState, Use } from '#shared/domain/floor/state.ts';
 import type { House } from '#shared/domain/house/state.ts';
 import { filmStrength, freshness, hoursBetween } from '#shared/domain/runs/ageing.ts';
-import { paceOf } from '#shared/domain/runs/pace.ts';
+import { paceOf } from '#shared/domain/runs/lane-time.ts';
 import type { Run } from '#shared/domain/runs/state.ts';
 import type { PatternFacts } from './sources.ts';
 

@@ -1,9 +1,10 @@
 import type { ResponseOf } from '#shared/contracts/contract.ts';
 import type { runContracts } from '#shared/contracts/runs.ts';
 import type { House } from '#shared/domain/house/state.ts';
-import { paceOf } from '#shared/domain/runs/pace.ts';
+import { paceOf } from '#shared/domain/runs/lane-time.ts';
 import type { Run } from '#shared/domain/runs/state.ts';
 import { type DressingWant, dressingTonight, type NightMachine, type PlannedRun, type Tonight } from '#shared/domain/runs/tonight.ts';
+import { tanksTonight } from '#shared/domain/runs/tonight-tanks.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import { type Library, revisionIn } from './library.ts';
 import { runBar } from './view.ts';
@@ -46,18 +47,25 @@ const NONE: Tonight = {
 /** What is still to be dressed tonight, by whom and by when; sessions by their names. */
 export function tonightView(house: House, library: Library, of: { wants: readonly DressingWant[]; marginMs: number }, now: number): Answer {
   const { wants, marginMs } = of;
+  const revisionOf = (code: string, revision: number | null) => revisionIn(library, code, revision);
   const night = dressingTonight({
     now, marginMs, wants, machines: nightMachines(house, library), planned: planned(house),
     underWay: Object.values(house.runs.active).filter((run) => run.status === 'under-way').map((run) => run.key),
-    revisionOf: (code, revision) => revisionIn(library, code, revision),
+    revisionOf,
   });
   const { blocks, unplanned, late, proof } = night ?? NONE;
+  const runsOut = library.machines.flatMap(({ code }) => {
+    const busy = Object.values(house.runs.active).filter((run) => run.machine === code && run.status === 'under-way');
+    const ahead = [...busy.map((run) => ({ lanes: lanesLeft(run), pattern: run.pattern, revision: run.revision })), ...blocks.filter((block) => block.machine === code)];
+    const levels = house.runs.levels[code];
+    return tanksTonight(code, { tankA: levels?.tankAUl ?? null, tankB: levels?.tankBUl ?? null }, ahead, revisionOf);
+  });
   const session = new Map(wants.map((want) => [want.session, want]));
   const nameOf = (id: string): string => session.get(id)?.name ?? id;
   const machineName = (code: string | number): string => library.machines.find((machine) => machine.code === code)?.name ?? String(code);
   const named = (because: Tonight['late'][number]['because']) => because.map(({ code, params }) => ({ code, params: params['machine'] === undefined ? params : { ...params, machine: machineName(params['machine']) } }));
   return {
-    at: now, possible: night !== null, proof,
+    at: now, possible: night !== null, proof, runsOut,
     blocks: blocks.map(({ session: id, breaksFirst, lanes, freeUnknown, ...block }) => {
       const want = id === null ? undefined : session.get(id);
       return { ...block, lanes: [...lanes], freeUnknown: [...freeUnknown], breaksFirst: breaksFirst && nameOf(breaksFirst), session: want ? { id: want.session, name: want.name, warmUpAt: want.warmUpAt } : null };

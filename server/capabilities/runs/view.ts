@@ -3,7 +3,7 @@ import type { RunBar } from '#shared/contracts/floor.ts';
 import { cannotLay } from '#shared/domain/runs/capability.ts';
 import { exitBoard, filmRatio } from '#shared/domain/runs/film-facts.ts';
 import { boardProfile, filmMap, footProfile } from '#shared/domain/runs/film.ts';
-import { paceOf } from '#shared/domain/runs/pace.ts';
+import { paceOf } from '#shared/domain/runs/lane-time.ts';
 import type { PatternRevision } from '#shared/domain/runs/pattern.ts';
 import type { Run, RunsState } from '#shared/domain/runs/state.ts';
 import { patternVolume } from '#shared/domain/runs/volume.ts';

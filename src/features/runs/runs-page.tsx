@@ -55,7 +55,7 @@ export function RunsPage() {
       actions={may('run.record') ? <><Button kind="primary" onClick={() => setForm('plan')}>{text.plan}</Button><Button onClick={() => setForm('record')}>{text.record}</Button></> : null}
       aside={<Machines machines={names.machines} />}
     >
-      {tonight ? <DressingNews late={tonight.late} unplanned={tonight.unplanned} /> : null}
+      {tonight ? <DressingNews late={tonight.late} unplanned={tonight.unplanned} runsOut={tonight.runsOut} machine={names.machine} /> : null}
       {tonight && toDress.length > 0 ? (
         <section className="mb-8">
           <PartTitle note={proofText(tonight.proof)}>{text.toDress}</PartTitle>

@@ -62,6 +62,7 @@ const tonight = z.object({
     startAt: instant, endAt: instant, /** Begun later, `breaksFirst` isn’t ready by its warm-up. */ startBy: z.nullable(instant), breaksFirst: z.nullable(z.string()), freeUnknown: z.array(laneNumber),
   })),
   unplanned: z.array(z.object({ session: z.string(), lanes: z.array(laneNumber), because })),
+  /** Tanks that don’t last for what is ahead. */ runsOut: z.array(z.object({ machine: code, store: z.enum(['tankA', 'tankB']), lane: laneNumber, shortUl: z.int() })),
   late: z.array(z.object({ session: z.string(), byMs: z.number(), because })),
   proof: z.object({
     method: z.enum(['exact', 'heuristic']), proven: z.object({ sessionsLate: z.boolean(), lateness: z.boolean(), freshness: z.boolean(), travel: z.boolean() }),

@@ -11,7 +11,7 @@ import { checkPattern } from './checks/pattern.ts';
 import { checkPinsetter } from './checks/pinsetter.ts';
 import { checkRepeatedStops } from './checks/repeated-stops.ts';
 import { checkRunComplete } from './checks/run-complete.ts';
-import { paceOf } from '../runs/pace.ts';
+import { paceOf } from '../runs/lane-time.ts';
 import { occupantsOf } from './occupancy.ts';
 import { runFor } from './run-forecast.ts';
 import type { ReadinessSettings } from './settings.ts';

@@ -5,7 +5,7 @@ import type { Session } from '../leagues/session.ts';
 import type { CheckName, CheckResult } from './check.ts';
 import { deliveriesAtWarmUp } from './checks/film.ts';
 import { type LaneReadiness, laneReadiness, situationOf } from './lane.ts';
-import { paceOf } from '../runs/pace.ts';
+import { paceOf } from '../runs/lane-time.ts';
 import { lanesLeft } from './run-forecast.ts';
 import { runsAround, type SessionReadiness } from './session.ts';
 import type { LaneSituation, RunOnLane, Surroundings } from './situation.ts';

@@ -1,5 +1,5 @@
 import { pairOf } from '../equipment.ts';
-import { paceOf } from '../runs/pace.ts';
+import { paceOf } from '../runs/lane-time.ts';
 import type { Run, RunsState } from '../runs/state.ts';
 import type { ReadinessSettings } from './settings.ts';
 import type { RunOnLane } from './situation.ts';

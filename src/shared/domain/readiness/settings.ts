@@ -1,5 +1,5 @@
 import { type AgeingSettings, DEFAULT_AGEING } from '../runs/ageing.ts';
-import { USUAL_PACE_MS } from '../runs/pace.ts';
+import { USUAL_LANE_MS } from '../runs/lane-time.ts';
 import type { CheckName } from './check.ts';
 
 const MINUTE = 60_000;
@@ -34,7 +34,7 @@ export const DEFAULT_READINESS: ReadinessSettings = {
   dressMarginMs: 4 * MINUTE,
   planLeadMs: 120 * MINUTE,
   unknownEndMs: 60 * MINUTE,
-  usualPaceMs: USUAL_PACE_MS,
+  usualPaceMs: USUAL_LANE_MS,
   stalledPaces: 3,
   lowBatteryPct: 20,
   repeatedStops: { stops: 3, frames: 200 },

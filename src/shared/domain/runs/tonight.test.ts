@@ -25,17 +25,18 @@ describe('what is still to be dressed tonight', () => {
   it('plans lanes that no run has, as late as is safe, and says until when it may begin', () => {
     const tonight = dressingTonight(night({ wants: [want('trios', [1, 2, 3, 4], 60)] }));
     expect(tonight?.blocks).toEqual([{
-      id: 'trios/1', run: null, session: 'trios', pattern: 'owls', revision: 3, machine: 'heron', lanes: [1, 2, 3, 4],
+      id: 'trios:owls:1-4', run: null, session: 'trios', pattern: 'owls', revision: 3, machine: 'heron', lanes: [1, 2, 3, 4],
       startAt: at(60 - 4 - 8), endAt: at(60 - 4), startBy: at(60 - 8), breaksFirst: 'trios', freeUnknown: [],
     }]);
     expect(tonight?.proof.proven.sessionsLate).toBe(true);
   });
 
-  it('lanes that free at another time are a block of their own, and wait for it', () => {
-    const lanes = [1, 2, 3, 4].map((lane) => ({ lane, freeAt: at(lane < 3 ? 0 : 45), run: null }));
-    const blocks = dressingTonight(night({ wants: [want('trios', [], 60, { lanes })] }))?.blocks ?? [];
-    expect(blocks.map((block) => block.lanes)).toEqual([[1, 2], [3, 4]]);
-    expect(blocks[1]?.startAt).toBeGreaterThanOrEqual(at(45));
+  it('lanes that free later wait for it; what a machine does without a stop in between is one stretch', () => {
+    const freed = (minutes: number) => want('trios', [], 60, { lanes: [1, 2, 3, 4].map((lane) => ({ lane, freeAt: at(lane < 3 ? 0 : minutes), run: null })) });
+    const stretches = (wants: DressingWant[]) => dressingTonight(night({ wants }))?.blocks.map((block) => [block.lanes, (block.startAt - NOW) / MIN, (block.endAt - NOW) / MIN]);
+    expect(stretches([freed(52)])).toEqual([[[1, 2, 3, 4], 48, 56]]);
+    const [mixed, freedLate] = stretches([freed(55), want('mixed', [5, 6], 58)]) ?? [];
+    expect([mixed?.[0], freedLate]).toEqual([[5, 6], [[1, 2, 3, 4], 51, 59]]);
   });
 
   it('a planned run keeps its machine and start; it must begin by when its session can’t wait longer, and the rest goes around it', () => {

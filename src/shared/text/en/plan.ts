@@ -43,6 +43,10 @@ export const planText = {
   unplanned: (name: string) => `${name} can’t be planned`,
 } as const;
 
+/** `Heron: conditioner A runs out before lane 29, 12 mL short. Fill it first.` */
+export const runsOutText = (machine: string, out: { store: string; lane: number; shortUl: number }): string =>
+  `${machine}: ${STORE[out.store] ?? out.store} runs out before lane ${out.lane}, ${millilitres(out.shortUl, 1)} short. Fill it first.`;
+
 /** How good the plan is known to be. */
 export function proofText(plan: Pick<Plan, 'proven' | 'method' | 'criteria' | 'bound'>): string {
   const { proven, criteria, bound } = plan;

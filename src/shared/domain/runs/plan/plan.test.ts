@@ -4,7 +4,6 @@ import type { Plan, PlanBlock, PlanInput, PlanMachine } from './model.ts';
 import { gapMs, makePlan, planCost } from './plan.ts';
 import { pairRelease } from './release.ts';
 import { replanInput } from './replan.ts';
-import { laneTimeMs } from './lane-time.ts';
 
 const MIN = 60_000;
 const T0 = Date.UTC(2026, 9, 7, 16, 0);
@@ -115,11 +114,6 @@ describe('release and cutting', () => {
     const tank = machine('M1', { stores: { tankA: { level: 100, capacity: 100 } } });
     const cut = formBlocks(jobs.map((j) => ({ ...j, usePerLane: { M1: { tankA: 20 } } })), [tank]);
     expect(cut.map((b) => b.lanes.length)).toEqual([5, 5, 2]);
-  });
-
-  it('believes a machine’s own median once enough lanes are seen', () => {
-    expect(laneTimeMs([1, 2, 3])).toBe(120_000);
-    expect(laneTimeMs([90, 100, 110, 120, 130, 140, 150, 1000])).toBe(125);
   });
 });
 

@@ -1,11 +1,10 @@
-/** The other lane of a pair: 1–2, 3–4 … */
-export const pairOf = (lane: number): number => (lane % 2 === 1 ? lane + 1 : lane - 1);
+import { neighbourOf } from '../../equipment.ts';
 
 /**
  * From when a lane may be dressed: both lanes of the pair free, pinsetter off, rake up, nobody in the
- * pit. `freeAt` (ms) by lane; a lane that isn't listed is free now. A centre may allow one lane beside play.
+ * pit. `freeAt` (ms) by lane, null: nobody knows; a lane that isn't listed is free now. A centre may allow one lane beside play.
  */
-export function pairRelease(lane: number, freeAt: ReadonlyMap<number, number>, now: number, besidePlay: boolean): number {
-  const own = Math.max(now, freeAt.get(lane) ?? now);
-  return besidePlay ? own : Math.max(own, freeAt.get(pairOf(lane)) ?? now);
+export function pairRelease(lane: number, freeAt: ReadonlyMap<number, number | null>, now: number, besidePlay: boolean): number | null {
+  const ends = [lane, ...(besidePlay ? [] : [neighbourOf(lane)])].map((one) => freeAt.get(one));
+  return ends.includes(null) ? null : Math.max(now, ...ends.map((end) => end ?? now));
 }
