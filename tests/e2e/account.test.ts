@@ -1,0 +1,59 @@
+import { afterAll, afterEach, beforeAll, expect, it } from 'vitest';
+import { systemClock } from '#server/platform/clock.ts';
+import { signIn } from '#tests/support/actors.ts';
+import { ask } from '#tests/support/ask.ts';
+import { openBrowser, PHONE, type TestBrowser } from '#tests/support/browser.ts';
+import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
+import { floorHouse, type FloorHouse } from '#tests/support/floor-house.ts';
+import { startServer, type TestServer } from '#tests/support/server.ts';
+
+let database: TestDatabase;
+let server: TestServer;
+let browser: TestBrowser;
+let house: FloorHouse;
+
+beforeAll(async () => {
+  database = await freshDatabase();
+  server = await startServer({ db: database.db, clock: systemClock });
+  browser = await openBrowser();
+  house = await floorHouse(server, 4);
+});
+afterEach(() => browser.closePages());
+afterAll(async () => {
+  await browser.close();
+  await server.close();
+  await database.close();
+});
+
+const isIn = async (cookie: string): Promise<boolean> => (await ask(server.url, 'GET', '/api/me', { cookie })).status === 200;
+
+it('sees where one is signed in, ends it there, and changes the password: the other sign-ins end, the old one opens nothing', async () => {
+  const [second, third] = [await signIn(server.url, house.mechanic), await signIn(server.url, house.mechanic)];
+  const page = await browser.page(server.url, house.mechanic, PHONE);
+  await page.goto(house.at('/floor'));
+  await page.getByRole('button', { name: /^Account/i }).click();
+  await page.getByRole('link', { name: 'Password and sign-ins' }).click();
+  const ends = page.getByRole('button', { name: 'Sign out there' });
+  await ends.nth(1).waitFor();
+  await ends.first().click();
+  await ends.nth(1).waitFor({ state: 'detached' });
+  expect([await isIn(second), await isIn(third)].filter(Boolean)).toHaveLength(1);
+
+  await page.getByLabel('Present password').fill('not the password');
+  await page.getByLabel('New password').fill('heron wades at dusk');
+  await page.getByRole('button', { name: 'Change password' }).click();
+  await page.getByText('This isn’t your present password.').waitFor();
+  await page.getByLabel('Present password').fill(house.mechanic.password);
+  await page.getByLabel('New password').fill('short');
+  await page.getByRole('button', { name: 'Change password' }).click();
+  await page.getByText(/^At least \d+ characters\.$/).waitFor();
+  expect([await isIn(second), await isIn(third)].filter(Boolean)).toHaveLength(1);
+  await page.getByLabel('New password').fill('heron wades at dusk');
+  await page.getByRole('button', { name: 'Change password' }).click();
+  await page.getByText('The password is changed; all other sign-ins have ended.').waitFor();
+  expect([await isIn(second), await isIn(third)]).toEqual([false, false]);
+  await expect(signIn(server.url, house.mechanic)).rejects.toThrow('401');
+  expect(await isIn(await signIn(server.url, { ...house.mechanic, password: 'heron wades at dusk' }))).toBe(true);
+  await page.reload();
+  await page.getByText('this browser').waitFor();
+});
