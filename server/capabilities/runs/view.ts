@@ -1,11 +1,12 @@
 import type { PatternDetail, RunDetail } from '#shared/contracts/runs.ts';
 import type { RunBar } from '#shared/contracts/floor.ts';
-import { cannotLay } from '#shared/domain/runs/capability.ts';
+import { cannotLay, type MachineCapability } from '#shared/domain/runs/capability.ts';
 import { exitBoard, filmRatio } from '#shared/domain/runs/film-facts.ts';
 import { boardProfile, filmMap, footProfile } from '#shared/domain/runs/film.ts';
 import { paceOf } from '#shared/domain/runs/lane-time.ts';
 import type { PatternRevision } from '#shared/domain/runs/pattern.ts';
 import type { Run, RunsState } from '#shared/domain/runs/state.ts';
+import { substituteFor } from '#shared/domain/runs/substitute.ts';
 import { patternVolume } from '#shared/domain/runs/volume.ts';
 import { type Library, revisionIn } from './library.ts';
 import type { Pattern, Revision } from './store.ts';
@@ -17,6 +18,11 @@ const volumeView = (revision: PatternRevision) => {
 
 export function patternSummary(pattern: Pattern, newest: Revision, usedBy: string[]) {
   return { code: pattern.code, name: pattern.name, revision: newest.revision, lengthFt: newest.body.lengthFt, volume: volumeView(newest.body), boardsNl: boardProfile(filmMap(newest.body)), usedBy };
+}
+
+function insteadOf(machine: MachineCapability, body: PatternRevision): PatternDetail['revisions'][number]['machines'][number]['instead'] {
+  const nearest = substituteFor(machine, body);
+  return nearest && { totalUl: patternVolume(nearest.revision).totalUl, loads: nearest.revision.passes.map((pass) => pass.loads), differenceUl: nearest.differenceUl, proven: nearest.proven };
 }
 
 /** A revision with all that is computed from it: volumes, film by board and foot, ratio, exit board, who can lay it. */
@@ -31,7 +37,7 @@ export function revisionView(revision: Revision, library: Library): PatternDetai
     boardsNl: boards, feetNl: footProfile(map), ratio: { left: ratio.left, right: ratio.right }, exitBoard: exitBoard(body.lengthFt),
     machines: library.machines.map((machine) => {
       const reasons = cannotLay(machine.capabilities, body, { oil: true, clean: false, deckTreatment: false });
-      return { machine: machine.code, name: machine.name, canLay: reasons.length === 0, reasons };
+      return { machine: machine.code, name: machine.name, canLay: reasons.length === 0, reasons, instead: insteadOf(machine.capabilities, body) };
     }),
   };
 }

@@ -4,7 +4,7 @@ import { Link, useParams } from 'react-router-dom';
 import type { PatternDetail } from '#shared/contracts/runs.ts';
 import { feet, millilitres } from '#shared/text/en/formats.ts';
 import { fieldSentence } from '#shared/text/en/refusals.ts';
-import { patternsText as text, ratioText } from '#shared/text/en/runs-page.ts';
+import { insteadText, patternsText as text, ratioText, reasonsText } from '#shared/text/en/runs-page.ts';
 import { useCentre } from '../../lib/centre.ts';
 import { useTimes } from '../../lib/formats.ts';
 import { sentenceOf } from '../../lib/refusal.ts';
@@ -12,7 +12,7 @@ import { Button } from '../../ui/button.tsx';
 import { Sheet } from '../../ui/dialog.tsx';
 import { Page, PartTitle, Skeleton } from '../../ui/page.tsx';
 import { Fact, Facts } from '../../ui/table.tsx';
-import { BoardBars, FilmFromAbove } from './components/film-picture.tsx';
+import { BoardBars, DifferenceBars, FilmFromAbove } from './components/film-picture.tsx';
 import { PassTable } from './components/pass-table.tsx';
 import { PatternForm } from './components/pattern-form.tsx';
 import { patternQuery } from './queries.ts';
@@ -57,13 +57,15 @@ export function PatternPage() {
 
 function Side({ pattern, revision, onChoose }: { pattern: PatternDetail; revision: Revision; onChoose: (revision: number) => void }) {
   const { dayAndTime } = useTimes();
+  const exit = revision.exitBoard === null ? null : <Fact term={text.exit}>{revision.exitBoard}</Fact>;
   return (
     <>
       <Facts>
         {([['A', revision.volume.aUl], ['B', revision.volume.bUl]] as const).filter(([, ul]) => ul > 0).map(([product, ul]) => <Fact key={product} term={`${text.conditioner} ${product}`}>{millilitres(ul)}</Fact>)}
-        {revision.exitBoard === null ? null : <Fact term={text.exit}>{revision.exitBoard}</Fact>}
+        {revision.volume.bUl === 0 ? exit : null}
         <Fact term={`${text.ratio}, ${text.left}`}>{ratioText(revision.ratio.left)}</Fact>
         <Fact term={`${text.ratio}, ${text.right}`}>{ratioText(revision.ratio.right)}</Fact>
+        {revision.volume.bUl > 0 ? exit : null}
       </Facts>
       <p className="mt-1 text-sm text-dim">{text.ratioNote}</p>
       {revision.exitBoard === null ? null : <p className="text-sm text-dim">{text.exitNote}</p>}
@@ -72,7 +74,8 @@ function Side({ pattern, revision, onChoose }: { pattern: PatternDetail; revisio
         {revision.machines.map((m) => (
           <li key={m.machine} className="border-t border-rule py-2">
             <strong className="font-[650]">{m.name}</strong>
-            <p className="text-dim">{m.canLay ? text.can : [...new Set(m.reasons.map((r) => `${r.pass === undefined ? '' : `${text.pass(r.pass)}: `}${fieldSentence(r.code, r.params)}`))].join(' ')}</p>
+            <p className="text-dim">{m.canLay ? text.can : reasonsText(m.reasons.map((r) => ({ pass: r.pass, says: fieldSentence(r.code, r.params) })))}</p>
+            {m.instead ? <Instead instead={m.instead} asked={revision.volume.totalUl} /> : null}
           </li>
         ))}
       </ul>
@@ -87,5 +90,15 @@ function Side({ pattern, revision, onChoose }: { pattern: PatternDetail; revisio
         ))}
       </ul>
     </>
+  );
+}
+
+/** What a machine with one volume would lay instead, and where it differs. */
+function Instead({ instead, asked }: { instead: NonNullable<Revision['machines'][number]['instead']>; asked: number }) {
+  return (
+    <figure className="m-0 mt-2">
+      <figcaption>{insteadText(instead, asked)}</figcaption>
+      <DifferenceBars differenceUl={instead.differenceUl} className="mt-1.5 w-full max-w-80" />
+    </figure>
   );
 }

@@ -38,7 +38,11 @@ export const patternDetail = z.extend(patternSummary, {
     revision: z.int(), at: instant, by: z.string(), note: z.nullable(z.string()), body: revisionBody, volume,
     passUl: z.array(z.int()), /** Film by board 1–39 from the left, nL. */ boardsNl: z.array(z.int()), /** By foot from the foul line, nL. */ feetNl: z.array(z.int()),
     /** Inside ÷ outside of each side; null where the outside is dry. */ ratio: z.object({ left: z.nullable(z.number()), right: z.nullable(z.number()) }),
-    exitBoard: z.nullable(z.number()), machines: z.array(z.object({ machine: code, name: z.string(), canLay: z.boolean(), reasons: z.array(reason) })),
+    exitBoard: z.nullable(z.number()), machines: z.array(z.object({
+      machine: code, name: z.string(), canLay: z.boolean(), reasons: z.array(reason),
+      /** What a machine with one volume can lay instead; by board what that is more (or less), µL. `proven`: nothing is nearer. */
+      instead: z.nullable(z.object({ totalUl: z.int(), loads: z.array(z.int()), differenceUl: z.array(z.int()), proven: z.boolean() })),
+    })),
   })),
 });
 export type PatternDetail = z.infer<typeof patternDetail>;

@@ -64,3 +64,14 @@ export function BoardBars({ revision, ratio }: { revision: PatternRevision; rati
     </svg>
   );
 }
+
+/** More above the line, less below it, by board. */
+export function DifferenceBars({ differenceUl, className }: { differenceUl: readonly number[]; className?: string }) {
+  const most = Math.max(1, ...differenceUl.map(Math.abs));
+  return (
+    <svg aria-hidden viewBox={`0 0 ${BOARDS * 4} 40`} className={className}>
+      {differenceUl.map((ul, i) => <rect key={i} x={i * 4} y={ul > 0 ? 20 - (19 * ul) / most : 20} width={3} height={(19 * Math.abs(ul)) / most} fill={ul > 0 ? 'var(--film)' : 'var(--amber)'} />)}
+      <line x1={0} x2={BOARDS * 4} y1={20} y2={20} stroke="var(--line)" strokeWidth={1} />
+    </svg>
+  );
+}

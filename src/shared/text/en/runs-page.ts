@@ -62,4 +62,20 @@ const USERS_NAMED = 3;
 /** The first few by name, the rest by number. */
 const usersText = (names: readonly string[]): string =>
   (names.length <= USERS_NAMED + 1 ? listed(names) : listed([...names.slice(0, USERS_NAMED), `${names.length - USERS_NAMED} more`]));
+/** Each reason once, with the passes that it concerns: `Passes 1, 2 and 4: It carries no product B.` */
+export function reasonsText(reasons: readonly { pass: number | undefined; says: string }[]): string {
+  const sentences = [...new Set(reasons.map((reason) => reason.says))];
+  return sentences.map((says) => {
+    const passes = [...new Set(reasons.filter((reason) => reason.says === says).flatMap((reason) => reason.pass ?? []))];
+    return passes.length === 0 ? says : `${passes.length === 1 ? 'Pass' : 'Passes'} ${listed(passes.map(String))}: ${says}`;
+  }).join(' ');
+}
+
+/** `Nearest that it can lay: 18.50 mL instead of 19.65 mL, by board at most 35 µL more or 20 µL less.` */
+export function insteadText({ totalUl, differenceUl, proven }: { totalUl: number; differenceUl: readonly number[]; proven: boolean }, asked: number): string {
+  const [more, less] = [Math.max(0, ...differenceUl), Math.max(0, ...differenceUl.map((ul) => -ul))];
+  const apart = [more > 0 ? `${number(more)} µL more` : null, less > 0 ? `${number(less)} µL less` : null].filter(Boolean).join(' or ');
+  return `${proven ? 'Nearest' : 'Near'} that it can lay: ${millilitres(totalUl)} instead of ${millilitres(asked)}${apart === '' ? ', the same on every board' : `, by board at most ${apart}`}.`;
+}
+
 export const ratioText = (ratio: number | null): string => (ratio === null ? patternsText.dry : `${number(ratio, 1)} : 1`);
