@@ -14,6 +14,8 @@ function demandValid(revision: RevisionBody): void {
   throw new Refusal(422, 'pattern.invalid', { count: problems.length }, problems.map((p) => ({ pointer: pointer(p.place), code: p.code, params: { ...p.params, ...(p.place.pass ? { pass: p.place.pass } : {}) } })));
 }
 
+const codeTaken = (code: string, params: Record<string, string>): Refusal => new Refusal(409, code, params, [{ pointer: '/code', code, params }]);
+
 interface Written {
   name?: string;
   code: string;
@@ -26,7 +28,7 @@ interface Written {
 export function addPattern(ledger: Ledger, centre: CentreRef, given: Written & { name: string }): Promise<void> {
   demandValid(given.revision);
   return ledger.decide(centre, async (_house, now, trx) => {
-    if ((await patternsOf(trx, centre.id)).some((p) => p.code === given.code)) throw conflict('pattern.code-taken', { pattern: given.code });
+    if ((await patternsOf(trx, centre.id)).some((p) => p.code === given.code)) throw codeTaken('pattern.code-taken', { pattern: given.code });
     return {
       facts: [], topics: ['patterns'], result: () => undefined,
       write: async (tx) => {
@@ -65,7 +67,7 @@ export function addMachine(ledger: Ledger, centre: CentreRef, machine: Machine):
   return ledger.decide(centre, (_house, now) => ({
     facts: [], topics: ['settings'], result: () => undefined,
     write: async (tx) => {
-      if (!(await insertMachine(tx, centre.id, machine, now))) throw conflict('machine.code-taken', { machine: machine.code });
+      if (!(await insertMachine(tx, centre.id, machine, now))) throw codeTaken('machine.code-taken', { machine: machine.code });
     },
   }));
 }
