@@ -3,6 +3,7 @@ import type { runContracts } from '#shared/contracts/runs.ts';
 import type { Person } from '#shared/domain/journal/fact.ts';
 import { cannotLay } from '#shared/domain/runs/capability.ts';
 import { runKey } from '#shared/domain/runs/fold.ts';
+import type { Run } from '#shared/domain/runs/state.ts';
 import { patternVolume } from '#shared/domain/runs/volume.ts';
 import { conflict, invalid, notFound, Refusal } from '#server/platform/http/refusal.ts';
 import type { Decision, HouseAt, NewFact } from '#server/platform/journal/ledger.ts';
@@ -30,6 +31,12 @@ function demandLanes(house: HouseAt, lanes: readonly number[]): void {
   if (twice >= 0) throw invalid('run.lane-twice', `/lanes/${twice}`, { lane: lanes[twice] ?? 0 });
 }
 
+/** A run ends where it breaks off, so it does so on one lane at most. */
+function demandOneBreak(lanes: Recorded['lanes']): void {
+  const second = lanes.findIndex((l, i) => l.outcome === 'broken-off' && lanes.slice(0, i).some((before) => before.outcome === 'broken-off'));
+  if (second >= 0) throw invalid('run.broken-off-twice', `/lanes/${second}`, { lane: lanes[second]?.lane ?? 0 });
+}
+
 /** The revision meant, if the machine can lay it; else all the reasons why not. */
 function demandRevision(library: Library, machineCode: string, code: string, revision: number | null): Revision {
   const machine = machineIn(library, machineCode);
@@ -46,35 +53,42 @@ function demandRevision(library: Library, machineCode: string, code: string, rev
 const lastOf = (house: HouseAt, machine: string): number =>
   Math.max(0, ...[...Object.values(house.state.runs.active), ...house.state.runs.ended].filter((r) => r.machine === machine).map((r) => r.lastAt));
 
-/** A code that this machine hasn't used: the next whole number of its runs. */
-function nextCode(house: HouseAt, machine: string, given: string | undefined): string {
+const runOf = (house: HouseAt, machine: string, run: string, earlier: Run | null): Run | null =>
+  house.state.runs.active[runKey(machine, run)] ?? house.state.runs.ended.findLast((r) => r.key === runKey(machine, run)) ?? earlier;
+
+/** A code that this machine hasn't used: the one given, else the next whole number of its runs. */
+function nextCode(house: HouseAt, machine: string, given: string | undefined, earlier: Run | null): string {
+  if (given !== undefined) {
+    if (runOf(house, machine, given, earlier)) throw new Refusal(409, 'run.code-taken', { run: given }, [{ pointer: '/run', code: 'run.code-taken', params: { run: given } }]);
+    return given;
+  }
   const used = new Set([...Object.values(house.state.runs.active), ...house.state.runs.ended].filter((r) => r.machine === machine).map((r) => r.run));
-  if (given !== undefined && used.has(given)) throw conflict('run.code-taken', { run: given });
-  if (given !== undefined) return given;
   let n = 1;
   while (used.has(`hand-${house.seq}-${n}`)) n += 1;
   return `hand-${house.seq}-${n}`;
 }
 
-export function planRun(house: HouseAt, library: Library, body: Plan, by: Person, now: number): { decision: Decision<HouseAt>; key: string } {
+/** `earlier` here and below: the run of that machine and code in the tables, or null; those that ended before the last cut are only there. */
+export function planRun(house: HouseAt, library: Library, body: Plan, by: Person, now: number, earlier: Run | null): { decision: Decision<HouseAt>; key: string } {
   demandLanes(house, body.lanes);
   const revision = demandRevision(library, body.machine, body.pattern, body.revision ?? null);
   if (body.startAt < now - 60_000) throw invalid('run.start-past', '/startAt');
-  const run = nextCode(house, body.machine, body.run);
+  const run = nextCode(house, body.machine, body.run, earlier);
   const data = { machine: body.machine, run, pattern: revision.code, revision: revision.revision, lanes: body.lanes, startAt: body.startAt };
   return { decision: done([{ type: 'run.planned', data, by, after: lastOf(house, body.machine) }]), key: runKey(body.machine, run) };
 }
 
 /** A run written down afterwards: its facts stand at its own times. Volumes are computed from the pattern and marked so. */
-export function recordRun(house: HouseAt, library: Library, body: Recorded, by: Person, now: number): { decision: Decision<HouseAt>; key: string } {
+export function recordRun(house: HouseAt, library: Library, body: Recorded, by: Person, now: number, earlier: Run | null): { decision: Decision<HouseAt>; key: string } {
   demandLanes(house, body.lanes.map((l) => l.lane));
+  demandOneBreak(body.lanes);
   const { machine, startedAt, finishedAt } = body;
   if (finishedAt <= startedAt) throw invalid('run.end-before-start', '/finishedAt');
   if (finishedAt > now) throw invalid('run.end-in-future', '/finishedAt');
   if (startedAt < now - WEEK_MS) throw invalid('run.too-old', '/startedAt');
   const revision = body.pattern === undefined ? null : demandRevision(library, machine, body.pattern, body.revision ?? null);
   if (!revision) machineIn(library, machine);
-  const run = nextCode(house, machine, body.run);
+  const run = nextCode(house, machine, body.run, earlier);
   const volume = revision && patternVolume(revision.body).byProduct;
   const conditionerMl = volume ? { conditionerMl: { a: volume.A / 1000, ...(volume.B > 0 ? { b: volume.B / 1000 } : {}) } } : {};
   const each = (finishedAt - startedAt) / body.lanes.length;
@@ -95,9 +109,9 @@ export function recordRun(house: HouseAt, library: Library, body: Recorded, by: 
   return { decision: done([start, ...lanes, end]), key: runKey(machine, run) };
 }
 
-export function cancelRun(house: HouseAt, machine: string, run: string, reason: string, by: Person): Decision<HouseAt> {
-  const found = house.state.runs.active[runKey(machine, run)];
-  if (!found && !house.state.runs.ended.some((r) => r.key === runKey(machine, run))) throw notFound('run.unknown', { run });
-  if (found?.status !== 'planned') throw conflict('run.not-planned', { run });
+export function cancelRun(house: HouseAt, machine: string, run: string, reason: string, by: Person, earlier: Run | null): Decision<HouseAt> {
+  const found = runOf(house, machine, run, earlier);
+  if (!found) throw notFound('run.unknown', { run });
+  if (found.status !== 'planned') throw conflict('run.not-planned', { run });
   return done([{ type: 'run.cancelled', data: { machine, run, reason }, by, after: found.lastAt }]);
 }

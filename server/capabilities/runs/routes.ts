@@ -2,6 +2,8 @@ import { runContracts as c } from '#shared/contracts/runs.ts';
 import { businessDay, businessDayAt, isDate } from '#shared/domain/business-day.ts';
 import type { House } from '#shared/domain/house/state.ts';
 import { median } from '#shared/domain/numbers/percentiles.ts';
+import { runKey } from '#shared/domain/runs/fold.ts';
+import type { Run } from '#shared/domain/runs/state.ts';
 import type { Deps } from '#server/deps.ts';
 import { personOf } from '#server/platform/http/person.ts';
 import { invalid, notFound } from '#server/platform/http/refusal.ts';
@@ -89,12 +91,15 @@ function runRoutes({ db, ledger }: RunsDeps, libraries: Libraries, wants: WantsO
     if (!run) throw notFound('run.unknown');
     return runDetail(run, state.runs, await libraries.of(centre));
   };
-  /** Decides with the library as it is, and answers with the run. */
-  const decide = async (centre: CentreRef, make: (house: HouseAt, library: Library, now: number) => { decision: ReturnType<typeof cancelRun>; key: string }) => {
+  /** Decides with the library as it is and the run that has the code already, if one has; answers with the run. */
+  const decide = async (
+    centre: CentreRef, { machine, run }: { machine: string; run?: string },
+    make: (house: HouseAt, library: Library, now: number, earlier: Run | null) => { decision: ReturnType<typeof cancelRun>; key: string },
+  ) => {
     const library = await libraries.of(centre);
     let key = '';
-    const after = await ledger.decide(centre, (house, now) => {
-      const made = make(house, library, now);
+    const after = await ledger.decide(centre, async (house, now, trx) => {
+      const made = make(house, library, now, run === undefined ? null : await runByKey(trx, centre.id, runKey(machine, run)));
       key = made.key;
       return made.decision;
     });
@@ -113,10 +118,10 @@ function runRoutes({ db, ledger }: RunsDeps, libraries: Libraries, wants: WantsO
       const [{ state }, library] = await Promise.all([ledger.read(centre), libraries.of(centre)]);
       return tonightView(state, library, await wants(centre, state, now), now);
     }),
-    serve(c.plan, ({ centre, body, actor }) => decide(centre, (house, library, now) => planRun(house, library, body, personOf(actor), now))),
-    serve(c.record, ({ centre, body, actor }) => decide(centre, (house, library, now) => recordRun(house, library, body, personOf(actor), now))),
-    serve(c.cancel, ({ centre, params, body, actor }) => decide(centre, (house) => ({
-      decision: cancelRun(house, params.machine, params.run, body.reason, personOf(actor)), key: `${params.machine}/${params.run}`,
+    serve(c.plan, ({ centre, body, actor }) => decide(centre, body, (house, library, now, earlier) => planRun(house, library, body, personOf(actor), now, earlier))),
+    serve(c.record, ({ centre, body, actor }) => decide(centre, body, (house, library, now, earlier) => recordRun(house, library, body, personOf(actor), now, earlier))),
+    serve(c.cancel, ({ centre, params, body, actor }) => decide(centre, params, (house, _library, _now, earlier) => ({
+      decision: cancelRun(house, params.machine, params.run, body.reason, personOf(actor), earlier), key: runKey(params.machine, params.run),
     }))),
   ];
 }

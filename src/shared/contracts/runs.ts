@@ -116,7 +116,7 @@ export const runContracts = {
       run: z.optional(line(40)), machine: code, pattern: z.optional(code), revision: z.optional(z.int()), startedAt: instant, finishedAt: instant,
       lanes: z.array(z.object({ lane: laneNumber, outcome: z.enum(['dressed', 'skipped', 'broken-off']), reason: z.optional(line(200)) })).check(z.minLength(1), z.maxLength(99)),
     }),
-    response: runDetail, refusals: [...refusedRun, 'run.end-before-start', 'run.end-in-future', 'run.too-old'],
+    response: runDetail, refusals: [...refusedRun, 'run.end-before-start', 'run.end-in-future', 'run.too-old', 'run.broken-off-twice'],
   }),
   cancel: contract({
     id: 'runs.cancel', method: 'POST', path: `${at}/runs/:machine/:run/cancel`, permission: 'run.record', summary: 'Take back a planned run', params: runParams, body: z.object({ reason: line(200) }),

@@ -12,6 +12,7 @@ export const refusals: Sentences = {
   'run.unknown': () => 'There is no such run.',
   'run.not-planned': ({ run }) => `Run ${run} is no longer planned, so it can’t be taken back.`,
   'run.code-taken': ({ run }) => `This machine has had a run ${run} already. Choose another code, or leave it empty.`,
+  'run.broken-off-twice': ({ lane }) => `A run breaks off on one lane. Lane ${lane} is a second one: say it was skipped, or record two runs.`,
   'run.lanes-unknown': ({ lane }) => `The house has no lane ${lane}.`,
   'run.lane-twice': ({ lane }) => `Lane ${lane} is named twice.`,
   'run.machine-cannot': ({ machine, pattern }) => `${machine} can’t lay ${pattern}. The reasons stand below; choose another machine or pattern.`,
