@@ -148,6 +148,38 @@ describe('changing a league', () => {
   });
 });
 
+describe('time that has passed', () => {
+  it.each([
+    ['another year', '2025-05-14', 1215], ['yesterday', '2026-05-13', 1215], ['earlier today', '2026-05-14', 11 * 60 + 59],
+  ])('%s: a session isn’t moved there, and stays as it was', async (_, date, startMinutes) => {
+    const { desk, go, league, centre } = await world.house();
+    const { sessions } = await league();
+    const rows = () => Promise.all(['session', 'session_lane'].map(async (table) => (await database.db(table).where('centre_id', centre.id)) as unknown[]));
+    const before = await rows();
+    const answer = await go(desk, 'PUT', `/bookings/${sessions[0]?.id}`, { lanes: [1, 2, 3, 4], date, startMinutes });
+    expect(refused(answer)).toMatchObject({ status: 409, code: 'booking.past', at: '/date', params: { date } });
+    expect(await rows()).toEqual(before);
+  });
+
+  it('one that bowls already changes its lanes, and may only begin later', async () => {
+    const { desk, go, league } = await world.house();
+    const { sessions } = await league();
+    clock.set('2026-05-14T20:40:00Z');
+    const move = (startMinutes: number) => go(desk, 'PUT', `/bookings/${sessions[0]?.id}`, { lanes: [1, 2, 3, 4], date: '2026-05-14', startMinutes });
+    expect(refused(await move(20 * 60 + 10))).toMatchObject({ status: 409, code: 'booking.past' });
+    expect(good(await move(20 * 60 + 15)).body).toMatchObject({ lanes: [1, 2, 3, 4], startAt: Date.parse('2026-05-14T20:15:00Z') });
+    expect((await move(20 * 60 + 45)).status).toBe(200);
+  });
+
+  it('a session that is over is neither moved nor cancelled', async () => {
+    const { desk, go, league } = await world.house();
+    const { sessions } = await league();
+    clock.set('2026-05-14T23:30:00Z');
+    expect(refused(await go(desk, 'PUT', `/bookings/${sessions[0]?.id}`, { lanes: [1, 2, 3, 4], date: '2026-05-16', startMinutes: 1215 }))).toMatchObject({ status: 409, code: 'booking.past' });
+    expect(refused(await go(desk, 'POST', `/bookings/${sessions[0]?.id}/cancel`))).toMatchObject({ status: 409, code: 'booking.past' });
+  });
+});
+
 describe('who sees what', () => {
   it('a secretary sees own leagues only, and edits none', async () => {
     const { league, secretary, go, desk } = await world.house();

@@ -1,6 +1,6 @@
 import type { BookingForm } from '#shared/contracts/leagues.ts';
 import { businessDayAt } from '#shared/domain/business-day.ts';
-import { invalid } from '#server/platform/http/refusal.ts';
+import { invalid, Refusal } from '#server/platform/http/refusal.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import type { HouseAt, Ledger, LedgerOptions } from '#server/platform/journal/ledger.ts';
 import { checkedLanes, openEvening, refuseTaken, saved } from './guards.ts';
@@ -10,6 +10,9 @@ import { leagueStore as store } from './store.ts';
 
 /** Judges a move under the lock: the house as it is, and what else is booked over that time. Throws a Refusal. */
 export type MoveGuard = (house: HouseAt, now: number, session: Evening, booked: readonly Evening[]) => void;
+
+/** Time that has passed isn't booked any more: nobody could make it ready, and nights that are over keep their figures. */
+const pastTime = (date: string): Refusal => new Refusal(409, 'booking.past', { date }, [{ pointer: '/date', code: 'booking.past', params: { date } }]);
 
 /** Single sessions: booked, moved, cancelled. */
 export function sessionCommands(ledger: Pick<Ledger, 'decide'>) {
@@ -21,12 +24,13 @@ export function sessionCommands(ledger: Pick<Ledger, 'decide'>) {
         return saved(centre, [evening], evening);
       }, options),
 
-    /** Other lanes or another time for one session. */
+    /** Other lanes or another time for one session; it may begin as it does, or later than now. */
     move: (centre: CentreRef, id: string, to: { lanes: number[]; date: string; startMinutes: number }): Promise<Evening> =>
       ledger.decide(centre, async (_house, now, trx) => {
         const before = await openEvening(trx, centre, id, now);
         const startAt = startOf(to.date, to.startMinutes, centre);
         const by = startAt - before.startAt;
+        if (by !== 0 && startAt < now) throw pastTime(to.date);
         const after: Evening = {
           ...before, lanes: checkedLanes(to.lanes, before, centre), startAt, warmUpAt: before.warmUpAt + by, endAt: before.endAt + by,
           date: businessDayAt(startAt, centre.zone, centre.cut).date, changed: true,

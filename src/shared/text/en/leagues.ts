@@ -25,7 +25,7 @@ export const refusals: Sentences = {
   'league.date-invalid': (params) => `${String(params['date'] ?? 'This')} isn’t a date.`,
   'league.pattern-unknown': ({ pattern, revision }) => `There is no pattern ${String(pattern)}${revision === undefined ? '' : `, revision ${String(revision)}`}.`,
   'booking.cancelled': () => 'This session was cancelled.',
-  'booking.past': () => 'This session is over.',
+  'booking.past': (params) => (params['date'] === undefined ? 'This session is over.' : `That time on ${day(params)} has passed. Choose a later one.`),
   'booking.in-missing-hour': (params) => `On ${day(params)} the clocks skip this hour.`,
 };
 
