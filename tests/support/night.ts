@@ -38,11 +38,20 @@ const EQUIPMENT = ['ball-return', 'ball-lift', 'foul-unit', 'scoring', 'masking'
 const USES = ['league', 'tournament', 'open', 'party', 'warmup', 'coaching', 'maintenance', 'unknown'] as const;
 const SOURCES = ['gateway/a', 'gateway/b', 'gateway/\u{1F3B3}', 'gateway/\uFFFD'];
 
+/** Which calls mechanics take notice of, and what share of them. */
+export interface Answered {
+  is: (event: NightEvent) => boolean;
+  share: number;
+}
+const ANY_CALL: Answered = { is: () => true, share: 0.15 };
+/** Calls that no device event ends: whether somebody may still act on one doesn't hang on what has arrived. */
+export const ASKED_AT_THE_LANE: Answered = { is: (event) => event.type === 'call.requested' && event.data.equipment !== undefined && event.data.equipment !== 'pinsetter', share: 0.8 };
+
 /**
  * A night of at least `count` events of every type, with people who acknowledge calls, reach lanes and clear: each act on a call whose
  * raise came before it. Times are coarse, so that many events share a millisecond.
  */
-export function aNight(seed: number, count = 3_000): Night {
+export function aNight(seed: number, count = 3_000, answered: Answered = ANY_CALL): Night {
   const random = randomOf(seed);
   const between = (low: number, high: number) => low + Math.floor(random() * (high - low + 1));
   const pick = <T>(list: readonly T[]): T => list[Math.floor(random() * list.length)] as T;
@@ -79,7 +88,7 @@ export function aNight(seed: number, count = 3_000): Night {
     const time = NIGHT_FROM + between(0, NIGHT_MS / 250) * 250;
     return { type, data: clean(make[type](time)), time, source: pick(SOURCES), id: `e${i}` } as NightEvent;
   });
-  return { lanes: LANES, from: NIGHT_FROM, events, acts: actsOn(events, random) };
+  return { lanes: LANES, from: NIGHT_FROM, events, acts: actsOn(events, random, answered) };
 }
 
 /** JSON has no undefined. */
@@ -93,13 +102,13 @@ const keyOf = (event: NightEvent): string | null => {
   return equipment === 'ball-return' || equipment === 'ball-lift' ? `${Math.ceil(lane / 2)}/${equipment}` : `${lane}/${equipment}`;
 };
 
-/** Of every seventh raise a mechanic takes notice, unless somebody is at that call already: mine, on lane, cleared. */
-function actsOn(events: readonly NightEvent[], random: () => number): NightAct[] {
+/** A mechanic takes notice of some raises, unless somebody is at that call already: mine, on lane, cleared. */
+function actsOn(events: readonly NightEvent[], random: () => number, answered: Answered): NightAct[] {
   const busyUntil = new Map<string, number>();
   const acts: NightAct[] = [];
   for (const event of [...events].sort((a, b) => a.time - b.time)) {
     const key = keyOf(event);
-    if (!key || random() > 0.15 || event.time <= (busyUntil.get(key) ?? 0)) continue;
+    if (!key || !answered.is(event) || random() > answered.share || event.time <= (busyUntil.get(key) ?? 0)) continue;
     // Odd milliseconds: no event shares them, and no two acts do.
     const begin = event.time + 1 + 2 * acts.length;
     const times = [begin + 30_000, begin + 90_000, begin + 240_000];
