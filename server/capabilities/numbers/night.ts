@@ -20,9 +20,9 @@ export function openingWithin(day: BusinessDay, hours: readonly ({ from: number;
   const open = hours[weekdayOf(day.date) - 1];
   if (!open) return [];
   const at = (minutes: number): number => {
-    const late = minutes >= 1440;
-    const wall = instantOfWall(late ? addDays(day.date, 1) : day.date, late ? minutes - 1440 : minutes, zone);
-    return wall.ok ? wall.instant : day.from;
+    const wall = instantOfWall(addDays(day.date, Math.floor(minutes / 1440)), minutes % 1440, zone);
+    // Inside the hour that the clocks skip: the moment at which they are put forward.
+    return wall.ok ? wall.instant : at(minutes + 1);
   };
   const span = { from: Math.max(day.from, at(open.from)), to: Math.min(day.to, at(open.to)) };
   return span.to > span.from ? [span] : [];

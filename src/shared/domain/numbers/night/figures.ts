@@ -125,10 +125,11 @@ export function rateOf(count: number, frames: number): Rate | null {
 }
 
 function kindFigures(kind: CountKind, input: NightInput, raised: readonly Call[]): NightFigures['byKind'][number] {
-  const played = input.lanes.flatMap((l) => l.uses.filter((u) => kindAt(u.kind, l.lane, u.from, input.sessions) === kind).map((u) => spanOf(u, input.now)));
+  // Lane by lane: two lanes that are played on at once are twice the time.
+  const played = input.lanes.flatMap((l) => clip(l.uses.filter((u) => kindAt(u.kind, l.lane, u.from, input.sessions) === kind).map((u) => spanOf(u, input.now)), input.day));
   return {
     ...countsOf(input.lanes, input, raised.filter((c) => kindOfCall(c, input) === kind), (k) => k === kind), kind,
-    playedMs: sum(clip(played, input.day), (s) => s.to - s.from),
+    playedMs: sum(played, (s) => s.to - s.from),
   };
 }
 
