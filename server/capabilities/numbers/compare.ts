@@ -25,8 +25,11 @@ export function pastOf(nights: readonly NightFigures[]): NightView['past'] {
 /** Figures of the house that came out otherwise since they were issued. */
 export function differences(issued: NightFigures, now: NightFigures): NightView['differs'] {
   const flat = (f: NightFigures): Record<string, number | null> => ({
-    frames: f.total.frames, framesEstimated: f.total.framesEstimated, deliveries: f.total.deliveries, stops: f.total.stops, calls: f.total.calls,
-    occupancy: f.total.occupancyOfAll, downMs: f.total.downMs, leagueLostMs: f.leagueLostMs, ready: f.ready.ready, lanesDressed: f.dressed.lanes,
+    frames: f.total.frames, framesEstimated: f.total.framesEstimated, deliveries: f.total.deliveries, games: f.total.games,
+    stops: f.total.stops, calls: f.total.calls, bowlerCalls: f.total.bowlerCalls, foreignCalls: f.total.foreignCalls,
+    occupancy: f.total.occupancyOfAll, occupancyInService: f.total.occupancyInService, downMs: f.total.downMs, wantedDownMs: f.total.wantedDownMs,
+    leagueLostMs: f.leagueLostMs, acknowledgedMs: f.acknowledged.median, onLaneMs: f.onLane.median, restoredMs: f.restored.median,
+    ready: f.ready.ready, readyOf: f.ready.of, lanesDressed: f.dressed.lanes, dressedUl: f.dressed.ul,
   });
   const before = flat(issued);
   return Object.entries(flat(now)).flatMap(([figure, value]) => (value === before[figure] ? [] : [{ figure, issued: before[figure] ?? null, now: value }]));

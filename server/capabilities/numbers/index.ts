@@ -14,7 +14,7 @@ export interface Numbers {
   routes: Route[];
   /** Tonight's figures for the floor; made anew at most every three seconds. */
   tonight(centre: CentreRef, house: House, now: number): Promise<FloorSnapshot['tonight']>;
-  /** Issues every night report that is due; mails only the latest. */
+  /** Issues every night report that is due; mails only the latest. A centre whose report fails keeps no other from its own; then throws AggregateError. */
   issueDue(now: number): Promise<void>;
   /** Issues the report of one date without mail, for nights that were loaded. */
   issueQuietly(centre: CentreRef, date: string, now: number): Promise<void>;
@@ -35,7 +35,9 @@ export function createNumbers(deps: Pick<Deps, 'db' | 'ledger'>, sources: Number
       return figures;
     },
     async issueDue(now) {
-      for (const centre of await centres()) await issueDue({ ...night, notices }, centre, now);
+      const failed: unknown[] = [];
+      for (const centre of await centres()) await issueDue({ ...night, notices }, centre, now).catch((error: unknown) => failed.push(error));
+      if (failed.length > 0) throw new AggregateError(failed, `the night report of ${failed.length} centres failed`);
     },
     async issueQuietly(centre, date, now) {
       await issue({ ...night, notices }, centre, date, now, false);

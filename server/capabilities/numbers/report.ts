@@ -1,4 +1,4 @@
-import { addDays, type BusinessDay, businessDayAt } from '#shared/domain/business-day.ts';
+import { addDays, type BusinessDay, businessDay, businessDayAt } from '#shared/domain/business-day.ts';
 import { nightReportMail } from '#shared/text/en/numbers.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import { onceADay } from '#server/platform/schedule/once-a-day.ts';
@@ -27,13 +27,17 @@ export async function issue(deps: NightDeps & { notices: Notices }, centre: Cent
   return done ? report : null;
 }
 
-/** Dates whose report is due at `now` and wasn't issued, oldest first. A centre without any report begins with its last night. */
+/** Dates whose report is due at `now` and wasn't issued, oldest first. A centre without any report begins with its last night, if anything was told of it. */
 export async function dueDates(deps: NightDeps, centre: CentreRef, now: number): Promise<string[]> {
   const last: BusinessDay = businessDayAt(now - AFTER_CUT_MS, centre.zone, centre.cut);
   const newest = addDays(last.date, -1);
   const [reported] = await reportedDates(deps.db, centre.id, 1);
+  if (reported === undefined) {
+    const night = businessDay(newest, centre.zone, centre.cut);
+    return (await deps.ledger.facts(centre, night.from, night.to)).length > 0 ? [newest] : [];
+  }
   const dates: string[] = [];
-  for (let date = newest; dates.length < CATCH_UP_DAYS && date > (reported ?? addDays(newest, -1)); date = addDays(date, -1)) dates.unshift(date);
+  for (let date = newest; dates.length < CATCH_UP_DAYS && date > reported; date = addDays(date, -1)) dates.unshift(date);
   return dates;
 }
 

@@ -88,8 +88,10 @@ export const wording = {
 };
 
 const DIFFER_NAMES: Record<string, string> = {
-  frames: 'Frames', framesEstimated: 'Estimated frames', deliveries: 'Deliveries', stops: 'Machine stops', calls: 'Calls', occupancy: 'Occupancy',
-  downMs: 'Downtime', leagueLostMs: 'League minutes lost', ready: 'Sessions ready', lanesDressed: 'Lanes dressed',
+  frames: 'Frames', framesEstimated: 'Estimated frames', deliveries: 'Deliveries', games: 'Games', stops: 'Machine stops', calls: 'Calls', bowlerCalls: 'Bowlers’ calls',
+  foreignCalls: 'Foreign objects', occupancy: 'Occupancy', occupancyInService: 'Occupancy of lanes in service', downMs: 'Downtime', wantedDownMs: 'Downtime wanted',
+  leagueLostMs: 'League minutes lost', acknowledgedMs: 'Acknowledged, median', onLaneMs: 'Mechanic on lane, median', restoredMs: 'Restored, median',
+  ready: 'Sessions ready', readyOf: 'Sessions', lanesDressed: 'Lanes dressed', dressedUl: 'Conditioner',
 };
 
 export const POSITIONS: Record<string, string> = {
@@ -100,7 +102,8 @@ export const POSITIONS: Record<string, string> = {
 export function differValue(figure: string, value: number | null): string {
   if (value === null) return '–';
   if (figure.endsWith('Ms')) return duration(value);
-  return figure === 'occupancy' ? percent(value * 100, 1) : number(value);
+  if (figure === 'dressedUl') return millilitres(value, 1);
+  return figure.startsWith('occupancy') ? percent(value * 100, 1) : number(value);
 }
 
 /** Rows of the night beside its weekday's past: name, tonight's value and how to write the past's. */
