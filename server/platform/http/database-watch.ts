@@ -7,8 +7,11 @@ import { Refusal } from './refusal.ts';
 const PATIENCE_MS = 1_200;
 /** … and gives it this long, together below the two seconds within which a caller hears that it is away … */
 const PING_MS = 600;
-/** … in slices: an answer that lay waiting while this process was busy is read before the next one ends. */
+/** … in slices: an answer that lay waiting while this process was busy is read before the next one ends … */
 const SLICES = 6;
+/** … and a slice that ended so late doesn't count, as this process was busy, not the database; a busy process decides at last. */
+const LATE_MS = 30;
+const MOST_SLICES = 40;
 const LAX_MS = 10_000;
 const RETRY_S = 2;
 
@@ -57,6 +60,10 @@ export async function databaseAnswers(db: Knex): Promise<boolean> {
 async function askOnce(beside: Knex): Promise<boolean> {
   let answer: boolean | null = null;
   beside.raw('select 1').then(() => (answer = true), (error: unknown) => (answer = !isDatabaseAway(error)));
-  for (let slice = 0; slice < SLICES && answer === null; slice += 1) await pause(PING_MS / SLICES, undefined, { ref: false });
+  for (let [slice, punctual] = [0, 0]; punctual < SLICES && slice < MOST_SLICES && answer === null; slice += 1) {
+    const from = performance.now();
+    await pause(PING_MS / SLICES, undefined, { ref: false });
+    if (performance.now() - from < PING_MS / SLICES + LATE_MS) punctual += 1;
+  }
   return answer === true;
 }
