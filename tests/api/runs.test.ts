@@ -226,6 +226,18 @@ describe('a planned run', () => {
     expect((await floor()).lanes.every((lane) => lane.film === null)).toBe(true);
   });
 
+  it('one that was taken back and that the machine makes all the same is under way: what it lays is on the lanes', async () => {
+    const { plan, cancel, send, runs, laneOf } = await house();
+    good(await plan({ run: '118' }));
+    good(await cancel('118'));
+    clock.advance(34 * MIN);
+    await send({ type: 'run.started', data: { machine: 'm1', run: '118' }, time: at(32) }, dressed('118', 1, 34));
+    expect(await runs()).toMatchObject([{ run: '118', status: 'under-way', reason: null, startAt: at(32), done: 1, laneNow: 2, pattern: 'house' }]);
+    expect((await laneOf(1))?.film).toMatchObject({ at: at(34), pattern: 'house' });
+    await send({ type: 'run.finished', data: { machine: 'm1', run: '118' } });
+    expect(await runs()).toMatchObject([{ status: 'finished', reason: null, endAt: at(34) }]);
+  });
+
   it('of ten who take it back at once, one does', async () => {
     const { plan, cancel } = await house();
     const { run } = good(await plan()).body as RunDetail;

@@ -11,7 +11,7 @@ import type { RunsState } from '../runs/state.ts';
 import type { House } from './state.ts';
 
 /** Raised by one whenever a fold gives another state for the same facts: stored states are then folded anew. */
-export const HOUSE_FOLD_VERSION = 1;
+export const HOUSE_FOLD_VERSION = 2;
 
 /** (house, fact) → house, for facts in their order. The only place where one slice's fact reaches another slice's state. */
 export function foldHouse(house: House, fact: Fact): House {

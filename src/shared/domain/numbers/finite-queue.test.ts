@@ -17,8 +17,8 @@ describe('finiteQueue', () => {
         const state = finiteQueue(one);
         expect(state.down.reduce((sum, chance) => sum + chance, 0)).toBeCloseTo(1, 12);
         const served = state.down.reduce((sum, chance, k) => sum + chance * Math.min(k, one.servers), 0) * one.service;
-        expect(Math.abs(state.arrivals / served - 1)).toBeLessThan(1e-6);
-        expect(Math.abs((state.arrivals * state.meanTime) / state.meanDown - 1)).toBeLessThan(1e-6);
+        expect(Math.abs(state.arrivals / served - 1)).toBeLessThan(1e-11);
+        expect(Math.abs((state.arrivals * state.meanTime) / state.meanDown - 1)).toBeLessThan(1e-11);
         expect(state.availability).toBeGreaterThanOrEqual(0);
         expect(state.availability).toBeLessThanOrEqual(1);
       }),

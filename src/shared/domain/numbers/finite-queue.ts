@@ -32,14 +32,16 @@ export function finiteQueue(input: FiniteQueueInput): FiniteQueue {
   demandAmount('calls', calls);
   demandPositive('service', service);
   const down = stateProbabilities(input);
-  let [meanDown, waiting] = [0, 0];
+  // Running machines are summed by themselves: in a house that is nearly all down, machines − meanDown would lose its digits.
+  let [meanDown, waiting, running] = [0, 0, 0];
   down.forEach((chance, k) => {
     meanDown += k * chance;
     waiting += Math.max(0, k - servers) * chance;
+    running += (machines - k) * chance;
   });
-  const arrivals = calls * (machines - meanDown);
+  const arrivals = calls * running;
   const meanWait = arrivals === 0 ? 0 : waiting / arrivals;
-  return { down, meanDown, waiting, arrivals, meanWait, meanTime: meanWait + 1 / service, availability: 1 - meanDown / machines };
+  return { down, meanDown, waiting, arrivals, meanWait, meanTime: meanWait + 1 / service, availability: running / machines };
 }
 
 function stateProbabilities({ machines, servers, calls, service }: FiniteQueueInput): number[] {

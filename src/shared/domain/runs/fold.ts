@@ -36,6 +36,9 @@ function known(runs: RunsState, fact: RunFact): Run {
 
 const isActive = (run: Run): boolean => run.status === 'planned' || run.status === 'under-way';
 
+/** A machine that makes a planned run begins it; also one that was taken back: what was laid is on the lanes, whatever was wanted. */
+const begun = (run: Run): Run => (run.status === 'planned' || run.status === 'cancelled' ? { ...run, status: 'under-way', endedAt: null, reason: null } : run);
+
 function put(runs: RunsState, run: Run): RunsState {
   const { [run.key]: _before, ...active } = runs.active;
   if (isActive(run)) return { ...runs, active: { ...active, [run.key]: run }, ended: without(runs.ended, run.key) };
@@ -52,11 +55,11 @@ function plan(runs: RunsState, fact: FactOf<'run.planned'>): RunsState {
 
 /** A machine does one run at a time: one that was never closed ends where the next begins. */
 function start(runs: RunsState, fact: FactOf<'run.started'>): RunsState {
-  const mine = known(runs, fact);
+  const mine = begun(known(runs, fact));
   const others = Object.values(runs.active).filter((r) => r.machine === mine.machine && r.status === 'under-way' && r.key !== mine.key);
   const closed = others.reduce((all, r) => put(all, { ...r, status: 'finished', endedAt: r.done.at(-1)?.finishedAt ?? fact.time, reason: 'not-closed' }), runs);
   return put(closed, {
-    ...mine, status: isActive(mine) ? 'under-way' : mine.status, startedAt: mine.startedAt ?? fact.time, pattern: fact.data.pattern ?? mine.pattern,
+    ...mine, startedAt: mine.startedAt ?? fact.time, pattern: fact.data.pattern ?? mine.pattern,
     revision: fact.data.revision ?? mine.revision, lanes: fact.data.lanes ?? mine.lanes, lastAt: fact.time,
   });
 }
@@ -72,9 +75,8 @@ function dress(runs: RunsState, fact: FactOf<'run.lane.dressed'>): RunsState {
 }
 
 function lane(runs: RunsState, fact: FactOf<'run.lane.dressed'> | FactOf<'run.lane.skipped'>, done: RunLane): RunsState {
-  const run = known(runs, fact);
-  const begun: Run = run.status === 'planned' ? { ...run, status: 'under-way' } : run;
-  return put(runs, { ...begun, startedAt: begun.startedAt ?? done.startedAt ?? fact.time, done: [...begun.done.filter((d) => d.lane !== done.lane), done], lastAt: fact.time });
+  const run = begun(known(runs, fact));
+  return put(runs, { ...run, startedAt: run.startedAt ?? done.startedAt ?? fact.time, done: [...run.done.filter((d) => d.lane !== done.lane), done], lastAt: fact.time });
 }
 
 function abort(runs: RunsState, fact: FactOf<'run.aborted'>): RunsState {
