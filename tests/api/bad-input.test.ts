@@ -15,8 +15,8 @@ import { SAMPLE_TIME, sampleHouse, type SampleHouse, type Who } from '#tests/sup
 import { SAMPLES, type Asked } from '#tests/support/samples.ts';
 import { startServer, type TestServer } from '#tests/support/server.ts';
 
-/** Requests of a route with a body, and of one without; together more than ten thousand. */
-const WITH_BODY = 240;
+/** Requests of a route with a body, and of one without; together more than five thousand. */
+const WITH_BODY = 120;
 const WITHOUT = 40;
 /** Statuses that speak of the request alone. */
 const INPUT = new Set([400, 413, 415, 422]);
@@ -158,9 +158,9 @@ describe.each(allContracts.map((contract) => [contract.id, contract] as const))(
   });
 });
 
-it('exercised every route, with more than ten thousand requests', () => {
+it('exercised every route, with more than five thousand requests', () => {
   expect([...tally.keys()].sort()).toEqual(allContracts.map(({ id }) => id).sort());
-  expect([...tally.values()].reduce((sum, { sent }) => sum + sent, 0)).toBeGreaterThan(10_000);
+  expect([...tally.values()].reduce((sum, { sent }) => sum + sent, 0)).toBeGreaterThan(5_000);
   expect(complained.said).toEqual([]);
 });
 
