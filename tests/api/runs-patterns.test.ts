@@ -37,16 +37,21 @@ async function house() {
 }
 
 describe('the volume of a pattern', () => {
-  it('is loads × boards × µL: 2 × 37 × 50 µL = 3.70 mL', async () => {
+  // As operators work it out by hand (common practice): aL–bR covers 39 − (a − 1) − (b − 1) boards, times loads, times µL.
+  it.each([
+    ['2L–2R twice at 50 µL: 2 × 37 × 50', 2, 2, 2, 50, 3_700], ['2L–2R three times at 50 µL: 3 × 37 × 50', 2, 2, 3, 50, 5_550], ['2L–2R three times at 40 µL: 3 × 37 × 40', 2, 2, 3, 40, 4_440],
+    ['8L–8R twice at 50 µL: 2 × 25 × 50', 8, 8, 2, 50, 2_500], ['2L–10R once at 30 µL: 29 × 30', 2, 10, 1, 30, 870],
+  ])('is loads × boards × µL: %s', async (_, left, right, loads, ul, expected) => {
     const { add } = await house();
-    const made = await add(aBody());
+    const made = await add(aBody({ passes: [aPass({ fromBoard: L(left), toBoard: R(right), loads, ul })] }));
     expect(made.status).toBe(201);
     const detail = made.body as PatternDetail;
-    expect(detail).toMatchObject({ code: 'ferry', name: 'Ferry', revision: 1, lengthFt: 40, volume: { aUl: 3_700, bUl: 0, totalUl: 3_700 } });
-    expect(detail.revisions[0]?.passUl).toEqual([3_700]);
-    // 3.7 mL on 37 boards: 100 µL each; boards 1 and 39 stay dry. Nothing is lost between the boards.
-    expect(detail.boardsNl).toEqual([0, ...Array.from({ length: 37 }, () => 100_000), 0]);
-    expect(sum(detail.revisions[0]?.feetNl ?? [])).toBe(3_700_000);
+    expect(detail).toMatchObject({ code: 'ferry', name: 'Ferry', revision: 1, lengthFt: 40, volume: { aUl: expected, bUl: 0, totalUl: expected } });
+    expect(detail.revisions[0]?.passUl).toEqual([expected]);
+    // Each board covered holds loads × µL, the others stay dry; nothing is lost between the boards or the feet.
+    const wet = 39 - (left - 1) - (right - 1);
+    expect(detail.boardsNl).toEqual([...Array.from({ length: left - 1 }, () => 0), ...Array.from({ length: wet }, () => loads * ul * 1_000), ...Array.from({ length: right - 1 }, () => 0)]);
+    expect(sum(detail.revisions[0]?.feetNl ?? [])).toBe(expected * 1_000);
   });
 
   it('adds up over passes, directions and both products, one-sided ranges too', async () => {
