@@ -52,13 +52,14 @@ describe('no text is cut, nothing overlaps, and axe finds nothing serious', () =
     await page.getByRole('heading', { level: 1, name: stands }).waitFor();
     await page.getByRole('status').filter({ hasText: /loading|working out/i }).first().waitFor({ state: 'detached' });
     for (const { viewport } of [DESK, WALL, PHONE]) {
-      for (const colorScheme of ['light', 'dark'] as const) {
+      // Colours move nothing: what is read in the dark of the house is looked at in both.
+      for (const colorScheme of viewport === PHONE.viewport ? (['light', 'dark'] as const) : (['light'] as const)) {
         await page.setViewportSize(viewport);
         await page.emulateMedia({ colorScheme });
         const where = `${viewport.width}×${viewport.height} ${colorScheme}`;
         expect(await layoutFaults(page), where).toEqual([]);
         expect(await page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth), where).toBeLessThanOrEqual(0);
-        const audited = viewport === DESK.viewport ? colorScheme === 'light' : viewport === PHONE.viewport && colorScheme === 'dark' && AT_THE_LANES.includes(name);
+        const audited = viewport === DESK.viewport || (viewport === PHONE.viewport && colorScheme === 'dark' && AT_THE_LANES.includes(name));
         if (audited) expect(await seriousFindings(page), where).toEqual([]);
       }
     }
