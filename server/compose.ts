@@ -49,7 +49,7 @@ export function compose(deps: Deps, postman: Postman | null, ingestRate?: Rate):
   const ingest = createIngest(deps, { centre }, ingestRate);
   // Runs ask who wants a pattern and which lanes wait; leagues and readiness ask what there is to want: each when it needs the other.
   const runs: Runs = createRuns(deps, { usedBy: (house) => leagues.patternUsers(house), wants: (...night) => readiness.dressingWanted(...night) });
-  const leagues = createLeagues(deps, { patternsOf: async (house) => patternNames(await runs.library(house)) });
+  const leagues = createLeagues(deps, { patternsOf: async (house) => patternNames(await runs.readLibrary(house)) });
   const accounts = createAccounts(deps, { leaguesOf: leagues.leagueIds });
   const managers = (house: CentreRef) => accounts.emails(house, ['manager']);
   const calls = createCalls(deps, { centre, notices, managers });

@@ -44,7 +44,7 @@ export async function leagueHouse({ db }: TestDatabase, clock: FixedClock) {
   const centres = createCentre({ db, ledger, log, clock });
   const notices = createNotices({ db, clock, log }, null);
   const runs: Runs = createRuns({ db, ledger }, { usedBy: (centre) => leagues.patternUsers(centre), wants: (...night) => readiness.dressingWanted(...night) });
-  const leagues = createLeagues({ db, ledger }, { patternsOf: async (centre) => patternNames(await runs.library(centre)) });
+  const leagues = createLeagues({ db, ledger }, { patternsOf: async (centre) => patternNames(await runs.readLibrary(centre)) });
   const readiness: Readiness = createReadiness({ db, ledger, clock, config }, { centre: centres, leagues, notices, runs });
   leagues.onChanged(readiness.forget);
   const web = await startWeb(db, { clock, routes: [...leagues.routes, ...readiness.routes, ...runs.routes], leaguesOf: leagues.leagueIds });

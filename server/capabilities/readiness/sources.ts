@@ -15,7 +15,7 @@ export interface ReadinessSources {
   centre: Pick<Centre, 'lanes' | 'all'>;
   leagues: Pick<Leagues, 'session' | 'sessionsBetween' | 'sessionsOfDate' | 'movePair'>;
   notices: Pick<Notices, 'queueMail'>;
-  runs: Pick<Runs, 'library'>;
+  runs: Pick<Runs, 'readLibrary'>;
 }
 
 /** What of a centre's records readiness rests on, besides its house. */
@@ -32,7 +32,7 @@ const OVERRUN_MS = 12 * 3_600_000;
 /** Records of a centre, with the sessions that touch [now, until) or may not have left yet. */
 export async function recordsOf(sources: ReadinessSources, weightsOf: (centre: CentreRef) => Promise<Weights>, centre: CentreRef, now: number, until: number): Promise<Records> {
   const [lanes, sessions, library, weights] = await Promise.all([
-    sources.centre.lanes(centre), sources.leagues.sessionsBetween(centre, now - OVERRUN_MS, until), sources.runs.library(centre), weightsOf(centre),
+    sources.centre.lanes(centre), sources.leagues.sessionsBetween(centre, now - OVERRUN_MS, until), sources.runs.readLibrary(centre), weightsOf(centre),
   ]);
   return { lanes: lanes.map(({ lane, family, certifiedUntil }) => ({ lane, family, certifiedUntil })), sessions, patterns: knownPatterns(library), weights };
 }

@@ -16,7 +16,7 @@ export type { Library } from './library.ts';
 
 export interface Runs {
   routes: Route[];
-  library(centre: CentreRef): Promise<Library>;
+  readLibrary(centre: CentreRef): Promise<Library>;
   /** Length of a revision, and whether the centre knows it. */
   patterns(centre: CentreRef): Promise<(code: string, revision: number | null) => { lengthFt: number; verified: boolean } | undefined>;
   machines(centre: CentreRef, house: House): Promise<FloorSnapshot['machines']>;
@@ -37,7 +37,7 @@ export function createRuns(deps: Pick<Deps, 'db' | 'ledger'>, sources: RunsSourc
   const body = (revision: PatternRevision) => ({ ...revision, passes: revision.passes.map((p) => ({ ...p })), cleanerZones: revision.cleanerZones?.map((z) => ({ ...z })) });
   return {
     routes: runsRoutes(deps, libraries, sources),
-    library: (centre) => libraries.of(centre),
+    readLibrary: (centre) => libraries.of(centre),
     async patterns(centre) {
       const library = await libraries.of(centre);
       return (code, revision) => {

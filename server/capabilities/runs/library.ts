@@ -13,7 +13,7 @@ const TRUST_MS = 2_000;
 
 /** Remembers each centre's library for two seconds, or until this process changes it. */
 export function createLibraries(db: Database) {
-  const kept = new Map<string, { until: number; library: Promise<Library> }>();
+  const kept = new Map<string, { until: number; read: Promise<Library> }>();
   const load = async (id: Buffer): Promise<Library> => {
     const [patterns, revisions, machines] = await Promise.all([patternsOf(db, id), revisionsOf(db, id), machinesOf(db, id)]);
     return { patterns, revisions, machines };
@@ -21,11 +21,11 @@ export function createLibraries(db: Database) {
   return {
     async of(centre: CentreRef): Promise<Library> {
       const before = kept.get(centre.slug);
-      if (before && performance.now() < before.until) return before.library;
-      const library = load(centre.id);
-      kept.set(centre.slug, { until: performance.now() + TRUST_MS, library });
-      library.catch(() => kept.delete(centre.slug));
-      return library;
+      if (before && performance.now() < before.until) return before.read;
+      const read = load(centre.id);
+      kept.set(centre.slug, { until: performance.now() + TRUST_MS, read });
+      read.catch(() => kept.delete(centre.slug));
+      return read;
     },
     forget: (centre: CentreRef): void => { kept.delete(centre.slug); },
   };
