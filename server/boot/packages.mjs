@@ -22,7 +22,7 @@ export function checkNode() {
 function missingPackages({ database, browser }) {
   const missing = [];
   if (database && (!which('mariadbd', 'mysqld') || !which('mariadb-install-db', 'mysql_install_db'))) missing.push('mariadb-server-core', 'mariadb-client-core');
-  if (browser && !which('chromium')) missing.push('chromium');
+  if (browser && !which('chromium-headless-shell')) missing.push('chromium-headless-shell');
   return missing;
 }
 

@@ -6,12 +6,9 @@ import { type CDPSession, chromium, type Page } from 'playwright-core';
 import { Server } from 'socket.io';
 import type { Identity } from '#shared/contracts/accounts.ts';
 import type { FloorDelta, FloorSnapshot, LaneView } from '#shared/contracts/floor.ts';
+import { CHROMIUM } from '#tests/support/browser.ts';
 
 const DIST = fileURLToPath(new URL('../../dist', import.meta.url));
-const CHROMIUM = {
-  executablePath: '/usr/bin/chromium',
-  args: ['--no-sandbox', '--disable-dev-shm-usage', '--disable-gpu', '--disable-quic', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync'],
-};
 const LANES = 80;
 const UPDATES_A_LANE = 5;
 /** The relay's tick: what changed within it travels as one message. */

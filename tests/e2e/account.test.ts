@@ -1,35 +1,17 @@
-import { afterAll, afterEach, beforeAll, expect, it } from 'vitest';
-import { systemClock } from '#server/platform/clock.ts';
+import { expect, it } from 'vitest';
 import { signIn } from '#tests/support/actors.ts';
 import { ask } from '#tests/support/ask.ts';
-import { openBrowser, PHONE, type TestBrowser } from '#tests/support/browser.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { floorHouse, type FloorHouse } from '#tests/support/floor-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { PHONE } from '#tests/support/browser.ts';
+import { floorHouse } from '#tests/support/floor-house.ts';
+import { stage } from '#tests/support/stage.ts';
 
-let database: TestDatabase;
-let server: TestServer;
-let browser: TestBrowser;
-let house: FloorHouse;
-
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await openBrowser();
-  house = await floorHouse(server, 4);
-});
-afterEach(() => browser.closePages());
-afterAll(async () => {
-  await browser.close();
-  await server.close();
-  await database.close();
-});
+const { server, house, screen } = await stage((server) => floorHouse(server, 4));
 
 const isIn = async (cookie: string): Promise<boolean> => (await ask(server.url, 'GET', '/api/me', { cookie })).status === 200;
 
 it('sees where one is signed in, ends it there, and changes the password: the other sign-ins end, the old one opens nothing', async () => {
   const [second, third] = [await signIn(server.url, house.mechanic), await signIn(server.url, house.mechanic)];
-  const page = await browser.page(server.url, house.mechanic, PHONE);
+  const page = await screen(house.mechanic, PHONE);
   await page.goto(house.at('/floor'));
   await page.getByRole('button', { name: /^Account/i }).click();
   await page.getByRole('link', { name: 'Password and sign-ins' }).click();

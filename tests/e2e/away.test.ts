@@ -1,35 +1,14 @@
 import type { Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
-import { systemClock } from '#server/platform/clock.ts';
-import { DESK, laneOnScreen, openBrowser, PHONE, seriousFindings, SOON, type TestBrowser } from '#tests/support/browser.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { floorHouse, type FloorHouse } from '#tests/support/floor-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
-import { aWire, type Wire } from '#tests/support/wire.ts';
+import { afterAll, afterEach, describe, expect, it } from 'vitest';
+import { DESK, laneOnScreen, PHONE, seriousFindings, SOON } from '#tests/support/browser.ts';
+import { floorHouse } from '#tests/support/floor-house.ts';
+import { stage } from '#tests/support/stage.ts';
+import { aWire } from '#tests/support/wire.ts';
 
-let database: TestDatabase;
-let server: TestServer;
-let browser: TestBrowser;
-let house: FloorHouse;
-let wire: Wire;
-
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await openBrowser();
-  house = await floorHouse(server, 12);
-  wire = await aWire(server.url);
-});
-afterEach(async () => {
-  await wire.mend();
-  await browser.closePages();
-});
-afterAll(async () => {
-  await wire.cut();
-  await browser.close();
-  await server.close();
-  await database.close();
-});
+const { server, browser, house } = await stage((server) => floorHouse(server, 12));
+const wire = await aWire(server.url);
+afterEach(() => wire.mend());
+afterAll(() => wire.cut());
 
 /** Nobody may take what is on the screen for now longer than this. */
 const SAID_WITHIN_MS = 10_000;

@@ -1,67 +1,25 @@
-import AxeBuilder from '@axe-core/playwright';
-import { type Browser, type BrowserContext, chromium, type Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
-import { systemClock } from '#server/platform/clock.ts';
-import { callsHouse, type CallsHouse, seen } from '#tests/support/calls-house.ts';
-import { ownDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import type { Page } from 'playwright-core';
+import { describe, expect, it } from 'vitest';
+import { mainFindings, PHONE, SOON } from '#tests/support/browser.ts';
+import { callsHouse, seen } from '#tests/support/calls-house.ts';
+import { stage } from '#tests/support/stage.ts';
 
-const PHONE = { viewport: { width: 390, height: 844 }, hasTouch: true, isMobile: true };
-const CHROMIUM = {
-  executablePath: '/usr/bin/chromium',
-  args: ['--no-sandbox', '--disable-dev-shm-usage', '--disable-gpu', '--disable-quic', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync'],
-};
-/** A hint travels within a second; a slow machine gets more. */
-const SOON = { timeout: 20_000 };
+const { house: h, screen } = await stage((server) => callsHouse(server, { lanes: 12 }));
 
-let database: TestDatabase;
-let server: TestServer;
-let browser: Browser;
-let h: CallsHouse;
-const contexts: BrowserContext[] = [];
-
-beforeAll(async () => {
-  database = await ownDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await chromium.launch(CHROMIUM);
-  h = await callsHouse(server, { lanes: 12 });
-});
-afterEach(async () => {
-  await Promise.all(contexts.splice(0).map((context) => context.close()));
-});
-afterAll(async () => {
-  await browser.close();
-  await server.close();
-  await database.close();
-});
-
-/** A page of somebody who is signed in. */
-async function pageOf(who: { cookie: string }, options: object = PHONE): Promise<Page> {
-  const context = await browser.newContext({ baseURL: server.url, ...options });
-  contexts.push(context);
-  const cookies = who.cookie.split('; ').map((pair) => ({ name: pair.slice(0, pair.indexOf('=')), value: pair.slice(pair.indexOf('=') + 1), url: server.url }));
-  await context.addCookies(cookies);
-  const page = await context.newPage();
-  page.setDefaultTimeout(20_000);
-  return page;
-}
 const calls = `/calls`;
 const path = (rest = '') => `/${h.centre.slug}${calls}${rest}`;
 const button = (page: Page, name: string | RegExp) => page.getByRole('button', { name, exact: typeof name === 'string' });
 
 /** Nothing that a reader, a thumb or an eye would miss: axe, targets under 48 px, text wider than the screen. */
 async function sound(page: Page): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).withTags(['wcag2a', 'wcag2aa', 'wcag21aa', 'wcag22aa']).include('main').analyze();
-  expect(violations.map((one) => `${one.id}: ${one.nodes.map((node) => node.html).join(' ')}`)).toEqual([]);
+  expect(await mainFindings(page)).toEqual([]);
   const small = await page.locator('main button:visible').evaluateAll((all) => all.map((one) => ({ text: one.textContent, height: one.getBoundingClientRect().height })).filter((one) => one.height < 48));
   expect(small).toEqual([]);
-  const wider = await page.locator('main').evaluate((main) => main.scrollWidth - main.clientWidth);
-  expect(wider).toBeLessThanOrEqual(0);
 }
 
 describe('the mechanic’s phone', () => {
   it('takes a call from "mine" to back running, with its cause', async () => {
-    const page = await pageOf(h.mechanic);
+    const page = await screen(h.mechanic, PHONE);
     await page.goto(path());
     await page.getByRole('heading', { name: 'No call is open.' }).waitFor();
     await h.device('lane.opened', { lane: 9, use: 'league', label: 'Thursday Scratch' });
@@ -89,7 +47,7 @@ describe('the mechanic’s phone', () => {
 
   it('keeps the lockout record, holds the lane until its release, and alarms when the machine counts', async () => {
     const call = await h.stop(5);
-    const page = await pageOf(h.mechanic, { ...PHONE, colorScheme: 'dark' });
+    const page = await screen(h.mechanic, { ...PHONE, colorScheme: 'dark' });
     await page.goto(path(`/${call.id}`));
     await button(page, 'Mine').click();
     await button(page, 'On lane').click();
@@ -122,7 +80,7 @@ describe('the mechanic’s phone', () => {
 
   it('keeps what is pressed without a connection, says that it is queued, and sends it once when it is back', async () => {
     const call = await h.stop(3);
-    const page = await pageOf(h.mechanic);
+    const page = await screen(h.mechanic, PHONE);
     await page.goto(path(`/${call.id}`));
     await button(page, 'Mine').waitFor();
     await page.context().setOffline(true);
@@ -140,7 +98,7 @@ describe('the mechanic’s phone', () => {
 
   it('says who was faster, and takes nothing from them', async () => {
     const call = await h.stop(1);
-    const page = await pageOf(h.mechanic);
+    const page = await screen(h.mechanic, PHONE);
     await page.goto(path(`/${call.id}`));
     await button(page, 'Mine').waitFor();
     await page.context().setOffline(true);
@@ -156,7 +114,7 @@ describe('the mechanic’s phone', () => {
 
 describe('the desk', () => {
   it('raises a call in two taps, and a danger that stops the pair', async () => {
-    const page = await pageOf(h.desk, { viewport: { width: 1440, height: 900 } });
+    const page = await screen(h.desk);
     await page.goto(path());
     await button(page, 'Lane 7').click();
     await button(page, 'ball return').click();

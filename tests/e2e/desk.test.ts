@@ -1,29 +1,11 @@
 import type { Page } from 'playwright-core';
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import type { FloorSnapshot } from '#shared/contracts/floor.ts';
-import { systemClock } from '#server/platform/clock.ts';
-import { laneOnScreen, openBrowser, SOON, type TestBrowser } from '#tests/support/browser.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { floorHouse, type FloorHouse } from '#tests/support/floor-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { laneOnScreen, SOON } from '#tests/support/browser.ts';
+import { floorHouse } from '#tests/support/floor-house.ts';
+import { stage } from '#tests/support/stage.ts';
 
-let database: TestDatabase;
-let server: TestServer;
-let browser: TestBrowser;
-let house: FloorHouse;
-
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await openBrowser();
-  house = await floorHouse(server, 32);
-});
-afterAll(async () => {
-  await browser.closePages();
-  await browser.close();
-  await server.close();
-  await database.close();
-});
+const { house, screen } = await stage((server) => floorHouse(server, 32), { keepScreens: true });
 
 const lanesNow = async () => ((await house.as(house.desk, 'GET', '/floor')) as FloorSnapshot).lanes;
 const laneNow = async (lane: number) => (await lanesNow())[lane - 1]!;
@@ -34,7 +16,7 @@ const press = (page: Page, name: string | RegExp) => panel(page).getByRole('butt
 let atDesk: Page | null = null;
 /** One screen through the tests, as at a desk; each begins with the floor anew. */
 async function deskAtFloor(): Promise<Page> {
-  const page = (atDesk ??= await browser.page(server.url, house.desk));
+  const page = (atDesk ??= await screen(house.desk));
   await page.goto(house.at('/floor'));
   await page.locator('[data-live="live"]').waitFor();
   return page;
@@ -42,7 +24,7 @@ async function deskAtFloor(): Promise<Page> {
 
 describe('signing in', () => {
   it('says beside the field what is wrong, lets in who is known, and leads where one wanted to go', async () => {
-    const page = await browser.page(server.url, null);
+    const page = await screen(null);
     await page.goto(house.at('/floor'));
     await page.getByRole('heading', { name: 'Sign in to your centre' }).waitFor();
     await page.getByLabel('Email address').fill(house.desk.email);

@@ -1,31 +1,13 @@
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
-import { systemClock } from '#server/platform/clock.ts';
-import { laneOnScreen, openBrowser, SOON, type TestBrowser, WALL } from '#tests/support/browser.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { floorHouse, type FloorHouse } from '#tests/support/floor-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { describe, expect, it } from 'vitest';
+import { laneOnScreen, SOON, WALL } from '#tests/support/browser.ts';
+import { floorHouse } from '#tests/support/floor-house.ts';
+import { stage } from '#tests/support/stage.ts';
 
-let database: TestDatabase;
-let server: TestServer;
-let browser: TestBrowser;
-let house: FloorHouse;
-
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await openBrowser();
-  house = await floorHouse(server, 32);
-});
-afterEach(() => browser.closePages());
-afterAll(async () => {
-  await browser.close();
-  await server.close();
-  await database.close();
-});
+const { server, house, screen } = await stage((server) => floorHouse(server, 32));
 
 describe('a screen on the wall', () => {
   it('is opened by the link that the manager makes, shows the house without anything to press, and loses it when the link is revoked', async () => {
-    const settings = await browser.page(server.url, house.manager);
+    const settings = await screen(house.manager);
     await settings.goto(house.at('/settings'));
     await settings.getByLabel('Where the screen hangs').fill('Over the desk');
     await settings.getByRole('button', { name: 'Make a link' }).click();
@@ -33,7 +15,7 @@ describe('a screen on the wall', () => {
     expect(link).toMatch(new RegExp(`^${server.url}/d/`));
     await settings.getByRole('button', { name: 'Done' }).click();
 
-    const wall = await browser.page(server.url, null, WALL);
+    const wall = await screen(null, WALL);
     await wall.goto(link);
     await wall.locator('[data-lane="32"]').waitFor();
     expect(new URL(wall.url()).pathname).toBe(house.at('/wall'));

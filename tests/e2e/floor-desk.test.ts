@@ -1,32 +1,14 @@
 import type { Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
-import { systemClock } from '#server/platform/clock.ts';
+import { describe, expect, it } from 'vitest';
 import { signedIn } from '#tests/support/actors.ts';
-import { openBrowser, PHONE, seriousFindings, type TestBrowser } from '#tests/support/browser.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { floorHouse, type FloorHouse } from '#tests/support/floor-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { PHONE, seriousFindings } from '#tests/support/browser.ts';
+import { floorHouse } from '#tests/support/floor-house.ts';
+import { stage } from '#tests/support/stage.ts';
 
-let database: TestDatabase;
-let server: TestServer;
-let browser: TestBrowser;
-let house: FloorHouse;
-
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await openBrowser();
-  house = await floorHouse(server, 32);
-});
-afterEach(() => browser.closePages());
-afterAll(async () => {
-  await browser.close();
-  await server.close();
-  await database.close();
-});
+const { server, house, screen } = await stage((server) => floorHouse(server, 32));
 
 async function floorOf(who: { cookie: string }, options?: object): Promise<Page> {
-  const page = await browser.page(server.url, who, options);
+  const page = await screen(who, options);
   await page.goto(house.at('/floor'));
   await page.locator('[data-live=live]').waitFor();
   await page.locator('[data-lane="32"]').waitFor();

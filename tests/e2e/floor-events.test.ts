@@ -1,33 +1,12 @@
-import type { Page } from 'playwright-core';
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { systemClock } from '#server/platform/clock.ts';
+import { describe, expect, it } from 'vitest';
 import type { DeviceData } from '#shared/domain/journal/fact.ts';
-import { openBrowser, type TestBrowser } from '#tests/support/browser.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { floorHouse, type FloorHouse } from '#tests/support/floor-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { floorHouse } from '#tests/support/floor-house.ts';
+import { stage } from '#tests/support/stage.ts';
 
-let database: TestDatabase;
-let server: TestServer;
-let browser: TestBrowser;
-let house: FloorHouse;
-let page: Page;
-
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await openBrowser();
-  house = await floorHouse(server, 32);
-  page = await browser.page(server.url, house.desk);
-  await page.goto(house.at('/floor'));
-  await page.locator('[data-live=live]').waitFor();
-});
-afterAll(async () => {
-  await browser.closePages();
-  await browser.close();
-  await server.close();
-  await database.close();
-});
+const { house, screen } = await stage((server) => floorHouse(server, 32), { keepScreens: true });
+const page = await screen(house.desk);
+await page.goto(house.at('/floor'));
+await page.locator('[data-live=live]').waitFor();
 
 type Told = [type: keyof DeviceData, data: object];
 interface Row {

@@ -1,33 +1,16 @@
 import type { Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
-import { systemClock } from '#server/platform/clock.ts';
+import { describe, expect, it } from 'vitest';
 import { openDisplay } from '#tests/support/actors.ts';
-import { DESK, openBrowser, PHONE, seriousFindings, type TestBrowser, WALL } from '#tests/support/browser.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { busyHouse, type BusyHouse } from '#tests/support/floor-house.ts';
+import { DESK, PHONE, seriousFindings, WALL } from '#tests/support/browser.ts';
+import { busyHouse } from '#tests/support/floor-house.ts';
 import { layoutFaults } from '#tests/support/layout-faults.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { stage } from '#tests/support/stage.ts';
 
-let database: TestDatabase;
-let server: TestServer;
-let browser: TestBrowser;
-const houses = new Map<number, BusyHouse>();
+const { server, house: houses, screen } = await stage(async (server) => ({ 8: await busyHouse(server, 8), 32: await busyHouse(server, 32), 64: await busyHouse(server, 64) }));
 
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await openBrowser();
-  for (const lanes of [8, 32, 64]) houses.set(lanes, await busyHouse(server, lanes));
-});
-afterEach(() => browser.closePages());
-afterAll(async () => {
-  await browser.close();
-  await server.close();
-  await database.close();
-});
-
+const HOUSES = [8, 32, 64] as const;
 const VIEWPORTS = { '1440×900': DESK, '1920×1080': WALL, '390×844': PHONE } as const;
-const SIZES = [8, 32, 64].flatMap((lanes) => (Object.keys(VIEWPORTS) as (keyof typeof VIEWPORTS)[]).map((viewport) => [lanes, viewport] as const));
+const SIZES = HOUSES.flatMap((lanes) => (Object.keys(VIEWPORTS) as (keyof typeof VIEWPORTS)[]).map((viewport) => [lanes, viewport] as const));
 
 /** The whole house is drawn, with its marks; the panel and figures have come. */
 async function drawnFloor(page: Page, lanes: number): Promise<void> {
@@ -39,8 +22,8 @@ async function drawnFloor(page: Page, lanes: number): Promise<void> {
 
 describe('the floor: no two marks overlap, no text is cut', () => {
   it.each(SIZES)('%i lanes at %s, light and dark', async (lanes, viewport) => {
-    const house = houses.get(lanes)!;
-    const page = await browser.page(server.url, house.desk, { ...VIEWPORTS[viewport], colorScheme: 'light' });
+    const house = houses[lanes];
+    const page = await screen(house.desk, { ...VIEWPORTS[viewport], colorScheme: 'light' });
     await page.goto(house.at('/floor'));
     await drawnFloor(page, lanes);
     for (const colorScheme of ['light', 'dark'] as const) {
@@ -51,10 +34,10 @@ describe('the floor: no two marks overlap, no text is cut', () => {
     }
   });
 
-  it.each([8, 32, 64])('the wall of %i lanes at 1920×1080', async (lanes) => {
-    const house = houses.get(lanes)!;
+  it.each(HOUSES)('the wall of %i lanes at 1920×1080', async (lanes) => {
+    const house = houses[lanes];
     const { cookie } = await openDisplay(server.url, server.slices.accounts, house.centre);
-    const page = await browser.page(server.url, { cookie }, WALL);
+    const page = await screen({ cookie }, WALL);
     await page.goto(house.at('/wall'));
     await page.locator(`[data-lane="${lanes}"]`).waitFor();
     expect(await layoutFaults(page)).toEqual([]);
@@ -63,8 +46,8 @@ describe('the floor: no two marks overlap, no text is cut', () => {
   });
 
   it('sees a text that is cut and marks that overlap', async () => {
-    const house = houses.get(8)!;
-    const page = await browser.page(server.url, house.desk, DESK);
+    const house = houses[8];
+    const page = await screen(house.desk, DESK);
     await page.goto(house.at('/floor'));
     await drawnFloor(page, 8);
     await page.evaluate(() => {

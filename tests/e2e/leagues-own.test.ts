@@ -1,29 +1,13 @@
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { signedIn } from '#tests/support/actors.ts';
 import { systemClock } from '#server/platform/clock.ts';
-import { openBrowser, PHONE, SOON, type TestBrowser } from '#tests/support/browser.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { floorHouse, type FloorHouse } from '#tests/support/floor-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { PHONE, SOON } from '#tests/support/browser.ts';
+import { floorHouse } from '#tests/support/floor-house.ts';
+import { stage } from '#tests/support/stage.ts';
 
 const MIN = 60_000;
-let database: TestDatabase;
-let server: TestServer;
-let browser: TestBrowser;
-let house: FloorHouse;
 
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await openBrowser();
-  house = await floorHouse(server, 12);
-});
-afterEach(() => browser.closePages());
-afterAll(async () => {
-  await browser.close();
-  await server.close();
-  await database.close();
-});
+const { server, house, screen } = await stage((server) => floorHouse(server, 12));
 
 /** The lane machine reports lanes as dressed with the pattern that is asked for. */
 async function dress(lanes: readonly number[]): Promise<void> {
@@ -41,7 +25,7 @@ describe('a secretary', () => {
     const own = await house.league({ name: 'Night Owls', fromLane: 5, toLane: 8, inMinutes: 65 });
     const other = await house.league({ name: 'Early Birds', fromLane: 9, toLane: 12, inMinutes: 65 });
     const secretary = await signedIn(server.url, server.slices.accounts, { centre: house.centre, role: 'secretary', leagues: [own.league] });
-    const page = await browser.page(server.url, secretary, PHONE);
+    const page = await screen(secretary, PHONE);
     await page.goto('/');
     await page.getByRole('heading', { level: 1, name: 'Night Owls', exact: true }).waitFor();
     expect(new URL(page.url()).pathname).toBe(house.at('/readiness'));
@@ -57,7 +41,7 @@ describe('a secretary', () => {
     await page.getByText('All four lanes are as asked.').waitFor(SOON);
     await confirm.click();
     await page.getByText(/confirmed at \d\d:\d\d/).first().waitFor();
-    const desk = await browser.page(server.url, house.desk);
+    const desk = await screen(house.desk);
     await desk.goto(house.at(`/readiness/${own.session}`));
     await desk.getByText(/confirmed at \d\d:\d\d/).first().waitFor();
     expect(await desk.getByRole('button', { name: /^Confirm lanes/ }).count()).toBe(0);

@@ -1,36 +1,19 @@
 import type { Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import type { FunnelView, NightView } from '#shared/contracts/numbers.ts';
 import { addDays, businessDay, businessDayAt } from '#shared/domain/business-day.ts';
 import { systemClock } from '#server/platform/clock.ts';
-import { openBrowser, SOON, type TestBrowser } from '#tests/support/browser.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { floorHouse, type FloorHouse } from '#tests/support/floor-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { SOON } from '#tests/support/browser.ts';
+import { floorHouse } from '#tests/support/floor-house.ts';
+import { stage } from '#tests/support/stage.ts';
 
 const HOUR = 3_600_000;
 const LANES = 8;
-let database: TestDatabase;
-let server: TestServer;
-let browser: TestBrowser;
-let house: FloorHouse;
-let date: string;
 
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await openBrowser();
-  house = await floorHouse(server, LANES);
-  date = addDays(businessDayAt(systemClock.now(), house.centre.zone, house.centre.cut).date, -1);
-  await lastNight();
-  await server.slices.numbers.issueQuietly(house.centre, date, systemClock.now());
-});
-afterEach(() => browser.closePages());
-afterAll(async () => {
-  await browser.close();
-  await server.close();
-  await database.close();
-});
+const { server, house, screen } = await stage((server) => floorHouse(server, LANES));
+const date = addDays(businessDayAt(systemClock.now(), house.centre.zone, house.centre.cut).date, -1);
+await lastNight();
+await server.slices.numbers.issueQuietly(house.centre, date, systemClock.now());
 
 /** Two hours of open play on every lane from 19:00 on: 30 frames and 55 deliveries each half hour; lanes 2 and 5 stop. */
 async function lastNight(): Promise<void> {
@@ -51,7 +34,7 @@ const figure = (page: Page, name: string) => page.getByRole('row', { name: new R
 
 describe('the manager, the morning after', () => {
   it('sees the finding and the night’s figures as the API has them, and as they were bowled', async () => {
-    const page = await browser.page(server.url, house.manager);
+    const page = await screen(house.manager);
     await page.goto(house.at('/numbers'));
     const { finding } = (await house.as(house.manager, 'GET', '/lanes-compared')) as FunnelView;
     await page.getByRole('heading', { level: 1, name: finding }).waitFor();
@@ -69,7 +52,7 @@ describe('the manager, the morning after', () => {
   });
 
   it('sees what came in late beside what was issued', async () => {
-    const page = await browser.page(server.url, house.manager);
+    const page = await screen(house.manager);
     await page.goto(house.at(`/numbers/${date}`));
     await page.getByText('The figures are as they were issued.').waitFor();
     const nine = businessDay(date, house.centre.zone, 0).from + 20 * HOUR;
@@ -80,7 +63,7 @@ describe('the manager, the morning after', () => {
   });
 
   it('sees people and gateways in the settings, makes a gateway whose key is shown once, and the key works', async () => {
-    const page = await browser.page(server.url, house.manager);
+    const page = await screen(house.manager);
     await page.goto(house.at('/settings'));
     for (const { email } of [house.desk, house.mechanic, house.manager]) await page.getByText(email, { exact: true }).waitFor();
     await page.getByText(/^Gateway \d+$/).first().waitFor();

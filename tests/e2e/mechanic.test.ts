@@ -1,34 +1,16 @@
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
-import { systemClock } from '#server/platform/clock.ts';
-import { laneOnScreen, openBrowser, PHONE, SOON, type TestBrowser } from '#tests/support/browser.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { floorHouse, type FloorHouse } from '#tests/support/floor-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { describe, expect, it } from 'vitest';
+import { laneOnScreen, PHONE, SOON } from '#tests/support/browser.ts';
+import { floorHouse } from '#tests/support/floor-house.ts';
+import { stage } from '#tests/support/stage.ts';
 
-let database: TestDatabase;
-let server: TestServer;
-let browser: TestBrowser;
-let house: FloorHouse;
-
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await openBrowser();
-  house = await floorHouse(server, 32);
-});
-afterEach(() => browser.closePages());
-afterAll(async () => {
-  await browser.close();
-  await server.close();
-  await database.close();
-});
+const { house, screen } = await stage((server) => floorHouse(server, 32));
 
 const LOCKOUT = ['Desk and bowlers told', 'Machine stopped', 'No ball comes from the neighbour lane', 'Machine off at the isolator', 'Ball lift off, own supply', 'My lock and tag on', 'Deck and rake down, springs released', 'Tried the start: stays dead'];
 const RELEASE = ['Tools out', 'Guards on', 'People clear', 'Told: it will run', 'My own lock and tag off'];
 
 describe('the mechanic’s phone, from the floor', () => {
   it('hears of a stop, takes it, reaches in with a record, releases, sets it running, and finds it in the history', async () => {
-    const page = await browser.page(server.url, house.mechanic, PHONE);
+    const page = await screen(house.mechanic, PHONE);
     await page.goto(house.at('/floor'));
     await page.locator('[data-live="live"]').waitFor();
     const strip = page.getByRole('alert').filter({ hasText: 'Deck jam' });
@@ -57,7 +39,7 @@ describe('the mechanic’s phone, from the floor', () => {
     for (const step of LOCKOUT) await tick(step);
     await page.getByText(/in machine, recorded/).first().waitFor();
     expect(await page.getByRole('button', { name: 'Back running', exact: true }).isDisabled()).toBe(true);
-    const second = await browser.page(server.url, house.desk);
+    const second = await screen(house.desk);
     await second.goto(house.at('/floor'));
     await second.locator('[data-lane="9"][data-mark="mechanic-in"]').waitFor();
     expect((await laneOnScreen(second, 9)).says).toContain(`mechanic in machine: ${house.mechanic.name}`);
@@ -82,7 +64,7 @@ describe('the mechanic’s phone, from the floor', () => {
   });
 
   it('opens a lane of the turned plan and closes it again', async () => {
-    const page = await browser.page(server.url, house.mechanic, PHONE);
+    const page = await screen(house.mechanic, PHONE);
     await page.goto(house.at('/floor'));
     await page.locator('[data-lane="21"]').click();
     const sheet = page.getByRole('dialog');

@@ -1,28 +1,10 @@
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
-import { systemClock } from '#server/platform/clock.ts';
-import { DESK, openBrowser, PHONE, seriousFindings, type TestBrowser, WALL } from '#tests/support/browser.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { busyHouse, type BusyHouse } from '#tests/support/floor-house.ts';
+import { describe, expect, it } from 'vitest';
+import { DESK, PHONE, seriousFindings, WALL } from '#tests/support/browser.ts';
+import { busyHouse } from '#tests/support/floor-house.ts';
 import { layoutFaults } from '#tests/support/layout-faults.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { stage } from '#tests/support/stage.ts';
 
-let database: TestDatabase;
-let server: TestServer;
-let browser: TestBrowser;
-let house: BusyHouse;
-
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await openBrowser();
-  house = await busyHouse(server, 32);
-});
-afterEach(() => browser.closePages());
-afterAll(async () => {
-  await browser.close();
-  await server.close();
-  await database.close();
-});
+const { house, screen } = await stage((server) => busyHouse(server, 32));
 
 /** Where each page is, and a heading that stands when its data has come. */
 const PAGES: [name: string, path: () => string, stands: RegExp][] = [
@@ -47,7 +29,7 @@ const AT_THE_LANES = ['calls', 'call', 'runs', 'readiness', 'session'];
 
 describe('no text is cut, nothing overlaps, and axe finds nothing serious', () => {
   it.each(PAGES)('%s', async (name, path, stands) => {
-    const page = await browser.page(server.url, name === 'sign-in' ? null : house.manager, { ...DESK, reducedMotion: 'reduce' });
+    const page = await screen(name === 'sign-in' ? null : house.manager);
     await page.goto(path());
     await page.getByRole('heading', { level: 1, name: stands }).waitFor();
     await page.getByRole('status').filter({ hasText: /loading|working out/i }).first().waitFor({ state: 'detached' });

@@ -1,61 +1,21 @@
-import AxeBuilder from '@axe-core/playwright';
-import { type Browser, type BrowserContext, chromium, type Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import type { Page } from 'playwright-core';
+import { describe, expect, it } from 'vitest';
 import { systemClock } from '#server/platform/clock.ts';
-import { ownDatabase, type TestDatabase } from '#tests/support/db.ts';
+import { DESK, mainFindings, PHONE, SOON } from '#tests/support/browser.ts';
 import { leagueEvening, type LeagueEvening } from '#tests/support/league-evening.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { stage } from '#tests/support/stage.ts';
 
-const PHONE = { viewport: { width: 390, height: 844 }, hasTouch: true, isMobile: true };
-const DESK = { viewport: { width: 1440, height: 900 } };
-const CHROMIUM = {
-  executablePath: '/usr/bin/chromium',
-  args: ['--no-sandbox', '--disable-dev-shm-usage', '--disable-gpu', '--disable-quic', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync'],
-};
-/** A hint travels within a second; a slow machine gets more, but less than the page would ask by itself. */
-const SOON = { timeout: 12_000 };
-
-let database: TestDatabase;
-let server: TestServer;
-let browser: Browser;
+const { server, screen } = await stage(() => Promise.resolve(null));
 let h: LeagueEvening;
-const contexts: BrowserContext[] = [];
 
-beforeAll(async () => {
-  database = await ownDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await chromium.launch(CHROMIUM);
-});
-afterEach(async () => {
-  await Promise.all(contexts.splice(0).map((context) => context.close()));
-});
-afterAll(async () => {
-  await browser.close();
-  await server.close();
-  await database.close();
-});
-
-async function pageOf(who: { cookie: string }, options: object): Promise<Page> {
-  const context = await browser.newContext({ baseURL: server.url, ...options });
-  contexts.push(context);
-  await context.addCookies(who.cookie.split('; ').map((pair) => ({ name: pair.slice(0, pair.indexOf('=')), value: pair.slice(pair.indexOf('=') + 1), url: server.url })));
-  const page = await context.newPage();
-  page.setDefaultTimeout(20_000);
-  return page;
-}
 const at = (path: string) => `/${h.centre.slug}${path}`;
 
-/** Axe finds nothing, and nothing is wider than the screen. */
-async function sound(page: Page): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).withTags(['wcag2a', 'wcag2aa', 'wcag21aa', 'wcag22aa']).include('main').analyze();
-  expect(violations.map((one) => `${one.id}: ${one.nodes.map((node) => node.html).join(' ')}`)).toEqual([]);
-  expect(await page.locator('main').evaluate((main) => main.scrollWidth - main.clientWidth)).toBeLessThanOrEqual(0);
-}
+const sound = async (page: Page): Promise<void> => expect(await mainFindings(page)).toEqual([]);
 
 describe('a secretary before the league', () => {
   it('sees on the phone that the lanes are ready, confirms, hears live what gets worse, and raises a concern', async () => {
     h = await leagueEvening(server);
-    const page = await pageOf(h.secretary, PHONE);
+    const page = await screen(h.secretary, PHONE);
     await page.goto(at('/readiness'));
     await page.getByRole('heading', { level: 1, name: 'Night Owls' }).waitFor();
     await page.getByText('All four lanes are as asked.').waitFor();
@@ -71,7 +31,7 @@ describe('a secretary before the league', () => {
     await page.getByLabel('What is wrong').fill('Lane 7 again.');
     await page.getByLabel('Lane', { exact: true }).selectOption('7');
     await page.getByRole('button', { name: 'Tell the desk' }).click();
-    await page.getByText('Lane 7 again.').waitFor();
+    await page.getByRole('paragraph').filter({ hasText: 'Lane 7 again.' }).waitFor();
     await h.device('pinsetter.restarted', { lane: 7 });
     await page.getByText('All four lanes are as asked.').waitFor(SOON);
     await confirm.click();
@@ -84,11 +44,11 @@ describe('the desk', () => {
     h = await leagueEvening(server);
     await server.slices.readiness.watch(h.centre, systemClock.now(), { mail: false });
     await h.device('pinsetter.stopped', { lane: 7 });
-    const secretary = await pageOf(h.secretary, PHONE);
+    const secretary = await screen(h.secretary, PHONE);
     await secretary.goto(at(`/readiness/${h.session.id}`));
     await secretary.getByRole('button', { name: 'Ask the desk for this' }).first().click();
     await secretary.getByText('Please: move 7–8 to 9–10.').waitFor();
-    const page = await pageOf(h.desk, DESK);
+    const page = await screen(h.desk, DESK);
     await page.goto(at(`/readiness/${h.session.id}`));
     await page.getByRole('heading', { name: 'Night Owls', exact: true }).waitFor();
     await page.getByRole('cell', { name: 'Call unanswered', exact: true }).first().waitFor();
@@ -104,7 +64,7 @@ describe('the desk', () => {
 
   it('makes a league; lanes backwards are refused beside their field, a skip week is a tick away', async () => {
     h = await leagueEvening(server);
-    const page = await pageOf(h.desk, DESK);
+    const page = await screen(h.desk, DESK);
     await page.goto(at('/leagues'));
     await page.getByRole('link', { name: 'New league' }).click();
     await page.getByRole('heading', { name: 'A new league' }).waitFor();
@@ -131,7 +91,7 @@ describe('the desk', () => {
 it('a manager says what holds', async () => {
   h = await leagueEvening(server);
   await h.device('pinsetter.stopped', { lane: 7 });
-  const page = await pageOf(h.manager, DESK);
+  const page = await screen(h.manager, DESK);
   await page.goto(at('/readiness'));
   await page.getByRole('heading', { name: 'Night Owls isn’t ready yet.' }).waitFor();
   await page.getByRole('button', { name: 'What holds' }).click();

@@ -1,38 +1,22 @@
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import type { PatternDetail } from '#shared/contracts/runs.ts';
 import { wallOf } from '#shared/domain/business-day.ts';
 import { wallTime } from '#shared/text/en/formats.ts';
 import { systemClock } from '#server/platform/clock.ts';
-import { openBrowser, PHONE, SOON, type TestBrowser } from '#tests/support/browser.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { floorHouse, type FloorHouse } from '#tests/support/floor-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { PHONE, SOON } from '#tests/support/browser.ts';
+import { floorHouse } from '#tests/support/floor-house.ts';
+import { stage } from '#tests/support/stage.ts';
 
 const MIN = 60_000;
-let database: TestDatabase;
-let server: TestServer;
-let browser: TestBrowser;
-let house: FloorHouse;
 
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock: systemClock });
-  browser = await openBrowser();
-  house = await floorHouse(server, 12);
-});
-afterEach(() => browser.closePages());
-afterAll(async () => {
-  await browser.close();
-  await server.close();
-  await database.close();
-});
+const { house, screen } = await stage((server) => floorHouse(server, 12));
 
 const clockIn = (minutes: number): string => wallTime(wallOf(systemClock.now() + minutes * MIN, house.centre.zone).minutes);
 
 describe('who runs the lane machine', () => {
   it('hears which lanes wait for a run, plans it with one tap, and sees it go lane by lane', async () => {
     await house.league({ name: 'Night Owls', fromLane: 5, toLane: 8, inMinutes: 75 });
-    const page = await browser.page(server.url, house.mechanic, PHONE);
+    const page = await screen(house.mechanic, PHONE);
     await page.goto(house.at('/runs'));
     await page.getByRole('heading', { level: 1, name: 'Lanes 5–8 wait for a run.' }).waitFor();
     await page.getByText(/^Start by \d\d:\d\d for Night Owls\.$/).waitFor();
@@ -52,7 +36,7 @@ describe('who runs the lane machine', () => {
   });
 
   it('writes down what was made; lanes and times that can’t be are said beside their fields, and nothing is sent', async () => {
-    const page = await browser.page(server.url, house.mechanic);
+    const page = await screen(house.mechanic);
     await page.goto(house.at('/runs'));
     await page.getByRole('button', { name: 'Record a run that was made' }).click();
     const form = page.getByRole('dialog');
@@ -76,7 +60,7 @@ describe('who runs the lane machine', () => {
 
   it('makes a revision of a pattern: a range that crosses itself is refused beside its field, the right one lays more', async () => {
     const before = (await house.as(house.mechanic, 'GET', '/patterns/house')) as PatternDetail;
-    const page = await browser.page(server.url, house.mechanic);
+    const page = await screen(house.mechanic);
     await page.goto(house.at('/patterns'));
     await page.getByRole('link', { name: /House/ }).click();
     await page.getByRole('button', { name: 'New revision' }).click();
@@ -100,7 +84,7 @@ describe('who runs the lane machine', () => {
 });
 
 it('the desk sees runs and plans none', async () => {
-  const page = await browser.page(server.url, house.desk);
+  const page = await screen(house.desk);
   await page.goto(house.at('/runs'));
   await page.getByText('Lane machines').waitFor();
   for (const name of ['Plan a run', 'Record a run that was made', 'Plan this run', 'Take back']) expect(await page.getByRole('button', { name }).count(), name).toBe(0);
