@@ -4,7 +4,7 @@ import { checkNode, ensureModules } from './packages.mjs';
 import { endSteps, root, runEntry, runToEnd, say } from './steps.mjs';
 
 const CHECKS = {
-  types: ['node_modules/typescript/bin/tsc', '-p', 'tsconfig.json'],
+  types: ['node_modules/typescript-seven/bin/tsc', '-p', 'tsconfig.json'],
   lint: ['node_modules/eslint/bin/eslint.js', '.', '--max-warnings', '0'],
   rules: ['node_modules/dependency-cruiser/bin/dependency-cruise.mjs', 'src', 'server', 'jobs', 'migrations', 'seeds', 'tests', '--config', '.dependency-cruiser.cjs'],
   tests: ['server/boot/test.mjs'],

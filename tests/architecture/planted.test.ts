@@ -4,7 +4,7 @@ import { join } from 'node:path';
 import { afterAll, describe, expect, it } from 'vitest';
 import { GROUND, PACKAGES, PLANTED } from './planted-dependencies.ts';
 import { PLANTED_LINT, SOUND } from './planted-lint.ts';
-import { dependencyViolations, lintViolations, plant, ROOT } from './tools.ts';
+import { dependencyViolations, lintViolations, plant, ROOT, typeErrors } from './tools.ts';
 
 const config = createRequire(import.meta.url)('../../.dependency-cruiser.cjs') as { forbidden: { name: string }[] };
 
@@ -33,6 +33,13 @@ describe('rules of dependencies', async () => {
     const edges = /^edge-/;
     expect(config.forbidden.map(({ name }) => name).filter((name) => !edges.test(name) && !PLANTED.some(({ rule }) => rule === name))).toEqual([]);
   });
+});
+
+it('types: an index that may be missing is told from one that is there', async () => {
+  const tree = plant({ 'src/shared/planted.ts': 'export const first = (all: number[]): number => all[0];\n' });
+  symlinkSync(join(ROOT, 'node_modules'), join(tree.at, 'node_modules'));
+  afterAll(tree.remove);
+  expect(await typeErrors(tree.at)).toMatch(/^src\/shared\/planted\.ts\(1,\d+\): error TS2322/);
 });
 
 describe('rules of lint', async () => {

@@ -17,6 +17,13 @@ export async function run(script: string, args: readonly string[], cwd: string):
   return { code, ...said };
 }
 
+/** The compiler's complaints about all of `cwd`, with the config that lies there; empty: none. */
+export async function typeErrors(cwd: string): Promise<string> {
+  const { code, out, err } = await run('typescript-seven/bin/tsc', ['--project', 'tsconfig.json', '--pretty', 'false'], cwd);
+  if ((code === 0) !== (out === '')) throw new Error(`tsc ended with ${code}: ${out}${err}`);
+  return out;
+}
+
 export interface Violation {
   rule: string;
   file: string;
