@@ -21,28 +21,28 @@ export function streamOf(type: string, data: FactData[FactType]): string {
 const byColumns = (by: Person | null) => ({ by_kind: by?.kind ?? null, by_id: by?.id ?? null, by_name: by?.name ?? null });
 
 /** A gateway's event as a fact and its row; no fact when it is set aside. */
-export function entered(centre: Buffer, entry: DeviceEntry, receivedAt: number, place: Place): { fact: Fact | null; row: JournalRow } {
+export function entered(centre: Buffer, entry: DeviceEntry, receivedAt: number, { seq, n }: Place): { fact: Fact | null; row: JournalRow } {
   const by: Person = { kind: 'gateway', id: entry.gateway.id, name: entry.gateway.name };
   const { source, id, type, time, data } = entry;
   const row: JournalRow = {
-    centre_id: centre, ...place, source, id, type, stream: data ? streamOf(type, data) : '', time_at: new Date(time),
+    centre_id: centre, seq, n, source, id, type, stream: data ? streamOf(type, data) : '', time_at: new Date(time),
     time_sent: entry.timeSent === undefined ? null : new Date(entry.timeSent), received_at: new Date(receivedAt),
     status: data ? 'applied' : 'set-aside', reason: data ? null : entry.reason, applied_at: null, ...byColumns(by),
     data: data && JSON.stringify(data), sent: JSON.stringify(entry.raw), content_hash: entry.hash,
   };
-  return { row, fact: data && ({ ...place, source, id, type, time, receivedAt, by, data } as Fact) };
+  return { row, fact: data && ({ seq, n, source, id, type, time, receivedAt, by, data } as Fact) };
 }
 
 /** What a person or job did as a fact and its row. Ids rise within a millisecond, so facts of one decision keep their order. */
-export function decided(centre: Buffer, given: NewFact, now: number, place: Place): { fact: Fact; row: JournalRow } {
+export function decided(centre: Buffer, given: NewFact, now: number, { seq, n }: Place): { fact: Fact; row: JournalRow } {
   const { type, data, by } = given;
   const time = given.at ?? Math.max(now, (given.after ?? -Infinity) + 1);
   const source = `lanewright/${by.kind}/${by.id}`;
   const id = newId();
   const text = JSON.stringify(data);
   const row: JournalRow = {
-    centre_id: centre, ...place, source, id, type, stream: streamOf(type, data), time_at: new Date(time), time_sent: null, received_at: new Date(now),
+    centre_id: centre, seq, n, source, id, type, stream: streamOf(type, data), time_at: new Date(time), time_sent: null, received_at: new Date(now),
     status: 'applied', reason: null, applied_at: null, ...byColumns(by), data: text, sent: null, content_hash: createHash('sha256').update(text).digest(),
   };
-  return { row, fact: { ...place, source, id, type, time, receivedAt: now, by, data } as Fact };
+  return { row, fact: { seq, n, source, id, type, time, receivedAt: now, by, data } as Fact };
 }

@@ -18,7 +18,8 @@ function served<S>(night: Night, steps: readonly Step[], fold: Fold<S>, base: S)
     const facts = 'events' in step ? step.events.flatMap((event, n): Fact[] => {
       if (arrived.has(event.id)) return [];
       const time = event.type === 'run.lane.dressed' ? event.data.finishedAt : event.time;
-      const fact = { ...event, ...place, n, time, by: gateway } as Fact;
+      // Field by field: with spreads in it, making facts took longer than folding them.
+      const fact = { seq: place.seq, n, source: event.source, id: event.id, type: event.type, time, receivedAt: place.receivedAt, by: gateway, data: event.data } as Fact;
       arrived.set(event.id, fact);
       return [fact];
     }) : [acted(step.act, arrived, place)];
@@ -32,7 +33,7 @@ function acted(act: Night['acts'][number], arrived: Map<string, Fact>, place: { 
   const raise = arrived.get(act.raise);
   if (!raise) throw new Error('somebody acted on a call that had not arrived');
   const call = raiseId(raise);
-  const frame = { ...place, n: 0, source: 'lanewright/user/mechanic', id: `${act.what} ${act.raise}`, time: act.at, by: mechanic };
+  const frame = { ...place, source: 'lanewright/user/mechanic', id: `${act.what} ${act.raise}`, time: act.at, n: 0, by: mechanic };
   if (act.what === 'acknowledge') return { ...frame, type: 'call.acknowledged', data: { call } };
   if (act.what === 'on-lane') return { ...frame, type: 'call.on-lane', data: { call } };
   return { ...frame, type: 'call.cleared', data: { call, cause: 'deck' } };
