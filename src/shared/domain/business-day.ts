@@ -10,8 +10,20 @@ export interface BusinessDay {
 const MINUTES_A_DAY = 1440;
 export const DEFAULT_CUT_MINUTES = 4 * 60;
 
+/** The day found last, by zone and cut: thousands of facts of one night fall into the same. */
+const lately = new Map<string, Readonly<BusinessDay>>();
+
 /** Business day in which an instant (epoch ms) falls; `cut` is minutes after local midnight. */
-export function businessDayAt(instant: number, zone: string, cut: number = DEFAULT_CUT_MINUTES): BusinessDay {
+export function businessDayAt(instant: number, zone: string, cut: number = DEFAULT_CUT_MINUTES): Readonly<BusinessDay> {
+  const key = `${zone} ${cut}`;
+  const last = lately.get(key);
+  if (last && instant >= last.from && instant < last.to) return last;
+  const day = Object.freeze(dayOf(instant, zone, cut));
+  lately.set(key, day);
+  return day;
+}
+
+function dayOf(instant: number, zone: string, cut: number): BusinessDay {
   const local = Temporal.Instant.fromEpochMilliseconds(instant).toZonedDateTimeISO(zone);
   const sameDay = businessDay(local.toPlainDate().toString(), zone, cut);
   return instant >= sameDay.from ? sameDay : businessDay(local.toPlainDate().subtract({ days: 1 }).toString(), zone, cut);
