@@ -161,6 +161,17 @@ describe('time that has passed', () => {
     expect(await rows()).toEqual(before);
   });
 
+  it('nothing is booked into it; a lane that is played on now is', async () => {
+    const { desk, go, centre } = await world.house();
+    clock.set('2026-05-14T19:00:00Z');
+    const book = (date: string, startMinutes: number) => go(desk, 'POST', '/bookings', { kind: 'open', name: 'Odell', date, startMinutes, minutes: 60, fromLane: 1, toLane: 2 });
+    for (const [date, startMinutes] of [['2026-05-13', 1215], ['2026-05-14', 18 * 60], ['2025-05-14', 1215]] as const) {
+      expect(refused(await book(date, startMinutes))).toMatchObject({ status: 409, code: 'booking.past', at: '/date', params: { date } });
+    }
+    expect(await database.db('session').where('centre_id', centre.id)).toEqual([]);
+    expect((await book('2026-05-14', 18 * 60 + 15)).status).toBe(201);
+  });
+
   it('one that bowls already changes its lanes, and may only begin later', async () => {
     const { desk, go, league } = await world.house();
     const { sessions } = await league();

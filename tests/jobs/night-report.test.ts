@@ -169,9 +169,13 @@ describe('figures that come out otherwise after the report', () => {
     const after = await night('2026-08-10');
     expect(after.report).toEqual(before.report);
     expect(after.figures.total).toMatchObject({ frames: 107, deliveries: 214, stops: 1, downMs: 10 * MIN });
-    expect(Object.fromEntries(after.differs.map((one) => [one.figure, [one.issued, one.now]]))).toEqual({
+    const of = (lane: number | null, kind: string | null) => Object.fromEntries(after.differs.filter((one) => one.lane === lane && one.kind === kind).map((one) => [one.figure, [one.issued, one.now]]));
+    expect(of(null, null)).toEqual({
       frames: [100, 107], deliveries: [200, 214], stops: [0, 1], calls: [0, 1], downMs: [0, 10 * MIN], wantedDownMs: [0, 10 * MIN], restoredMs: [null, 10 * MIN],
     });
+    expect(of(1, null)).toEqual({ frames: [100, 107], deliveries: [200, 214], stops: [0, 1], calls: [0, 1], downMs: [0, 10 * MIN], wantedDownMs: [0, 10 * MIN] });
+    expect(of(null, 'open')).toEqual({ frames: [100, 107], deliveries: [200, 214], stops: [0, 1], calls: [0, 1] });
+    expect(new Set(after.differs.map((one) => one.lane ?? one.kind))).toEqual(new Set([null, 1, 'open']));
     expect(await mails()).toEqual(letters);
   });
 
@@ -189,7 +193,7 @@ describe('figures that come out otherwise after the report', () => {
       good(await ask(server.url, 'POST', `/api/centres/${centre.slug}/calls/${open[0]?.id}/${step}`, { cookie }));
       clock.advance(5 * MIN);
     }
-    expect((await night('2026-08-20')).differs).toEqual([{ figure: 'acknowledgedMs', issued: null, now: 12 * 60 * MIN }, { figure: 'onLaneMs', issued: null, now: 12 * 60 * MIN + 5 * MIN }]);
+    expect((await night('2026-08-20')).differs).toEqual([{ lane: null, kind: null, figure: 'acknowledgedMs', issued: null, now: 12 * 60 * MIN }, { lane: null, kind: null, figure: 'onLaneMs', issued: null, now: 12 * 60 * MIN + 5 * MIN }]);
   });
 
   it('an event that was told twice, or belongs to another night, changes nothing', async () => {

@@ -20,6 +20,7 @@ export function sessionCommands(ledger: Pick<Ledger, 'decide'>) {
     book: (centre: CentreRef, form: BookingForm, options?: LedgerOptions): Promise<Evening> =>
       ledger.decide(centre, async (_house, now, trx) => {
         const evening = bookingEvening(form, centre, now);
+        if (evening.endAt <= now) throw pastTime(form.date);
         await refuseTaken(trx, centre, [evening], '/fromLane');
         return saved(centre, [evening], evening);
       }, options),

@@ -82,7 +82,7 @@ export const leagueContracts = {
   }),
   book: contract({
     id: 'bookings.create', method: 'POST', path: bookings, permission: 'league.edit', summary: 'Book lanes for a party, open play, practice …', params: centreParams, body: bookingForm, status: 201, response: bookingView,
-    refusals: [...laneRefusals, 'booking.in-missing-hour', 'league.date-invalid'],
+    refusals: [...laneRefusals, 'booking.past', 'booking.in-missing-hour', 'league.date-invalid'],
   }),
   move: contract({
     id: 'bookings.move', method: 'PUT', path: `${bookings}/:session`, permission: 'league.edit', summary: 'Other lanes, or another time, for one session', params: sessionParams,

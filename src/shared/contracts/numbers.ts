@@ -2,6 +2,7 @@ import * as z from 'zod/mini';
 import { LANE_USES } from '../domain/equipment.ts';
 import { centreParams, contract, date, instant, laneNumber } from './contract.ts';
 
+const COUNT_KINDS = [...LANE_USES, 'unassigned'] as const;
 const ms = z.number();
 const rate = z.nullable(z.object({ perThousand: z.number(), low: z.number(), high: z.number() }));
 const counts = {
@@ -14,7 +15,7 @@ const share = z.nullable(z.number());
 
 export const nightFiguresView = z.object({
   total: z.object({ ...counts, use, occupancyOfAll: share, occupancyInService: share, downMs: ms, wantedDownMs: ms }),
-  byKind: z.array(z.object({ ...counts, kind: z.enum([...LANE_USES, 'unassigned']), playedMs: ms })),
+  byKind: z.array(z.object({ ...counts, kind: z.enum(COUNT_KINDS), playedMs: ms })),
   byLane: z.array(z.object({ ...counts, lane: laneNumber, use, occupancy: share, downMs: ms, wantedDownMs: ms })),
   leagueLostMs: ms, acknowledged: spread, onLane: spread, restored: spread,
   ready: z.object({ ready: z.int(), of: z.int() }), dressed: z.object({ lanes: z.int(), ul: z.int(), told: z.int() }),
@@ -32,8 +33,8 @@ export const nightView = z.object({
   figures: nightFiguresView,
   /** As issued after the cut and kept unchanged; null: not yet. */
   report: z.nullable(z.object({ issuedAt: instant, figures: nightFiguresView })),
-  /** Figures that came out otherwise since the report was issued. */
-  differs: z.array(z.object({ figure: z.string(), issued: z.nullable(z.number()), now: z.nullable(z.number()) })),
+  /** Figures that came out otherwise since the report was issued: of the house (no `lane`, no `kind`), of a lane, of a kind of play. */
+  differs: z.array(z.object({ figure: z.string(), lane: z.nullable(laneNumber), kind: z.nullable(z.enum(COUNT_KINDS)), issued: z.nullable(z.number()), now: z.nullable(z.number()) })),
   past: z.record(z.enum(PAST_FIGURES), past),
   /** Nights that have a report, newest first, at most 60. */
   nights: z.array(date),

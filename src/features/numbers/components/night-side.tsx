@@ -1,11 +1,12 @@
 import { Link } from 'react-router-dom';
 import type { NightView } from '#shared/contracts/numbers.ts';
 import { addDays } from '#shared/domain/business-day.ts';
-import { differValue, wording } from '#shared/text/en/numbers.ts';
+import { wording } from '#shared/text/en/numbers.ts';
 import { useCentre } from '../../../lib/centre.ts';
 import { useTimes } from '../../../lib/formats.ts';
 import { buttonLook } from '../../../ui/button.tsx';
 import { PartTitle } from '../../../ui/page.tsx';
+import { Differs } from './differs.tsx';
 import { NightTable } from './night-table.tsx';
 
 /** The night at the manager's elbow: its figures beside the weekday's past, and whether the issued report still holds. */
@@ -23,14 +24,7 @@ export function NightSide({ night }: { night: NightView }) {
       </nav>
       <p className="mt-5 text-dim">{night.report ? wording.issued(dayAndTime(night.report.issuedAt)) : wording.notIssued}</p>
       {night.report && night.differs.length === 0 ? <p className="text-dim">{wording.sameAsIssued}</p> : null}
-      {night.differs.length > 0 ? (
-        <div className="mt-2">
-          <p className="font-[620]">{wording.differ(night.differs.length)}</p>
-          <ul className="mt-1 list-disc pl-5 text-dim">
-            {night.differs.map((d) => <li key={d.figure}>{wording.differRow(d.figure, differValue(d.figure, d.issued), differValue(d.figure, d.now))}</li>)}
-          </ul>
-        </div>
-      ) : null}
+      <Differs differs={night.differs} />
       <details className="mt-5 text-dim">
         <summary className="min-h-9 cursor-pointer font-[620] text-ink">{wording.definitions}</summary>
         {wording.definition.map((line) => <p key={line} className="mt-2">{line}</p>)}

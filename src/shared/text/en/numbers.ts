@@ -1,4 +1,4 @@
-import type { PastFigure } from '../../contracts/numbers.ts';
+import type { NightView, PastFigure } from '../../contracts/numbers.ts';
 import type { CountKind } from '../../domain/equipment.ts';
 import type { NightFigures, Rate } from '../../domain/numbers/night/figures.ts';
 import { dayOfDate, duration, longDate, millilitres, number, percent, plural } from './formats.ts';
@@ -37,7 +37,9 @@ export const wording = {
   notIssued: 'The report is issued 15 minutes after the cut.',
   sameAsIssued: 'The figures are as they were issued.',
   differ: (count: number) => `${plural(count, 'figure')} came out otherwise since the report was issued.`,
-  differRow: (figure: string, before: string, now: string) => `${DIFFER_NAMES[figure] ?? figure}: issued ${before}, now ${now}`,
+  differCount: (count: number) => plural(count, 'figure'),
+  differWhere: ({ lane, kind }: Difference) => (lane === null ? (kind === null ? 'The house' : KIND_NAMES[kind]) : `Lane ${lane}`),
+  differRow: ({ figure, issued, now }: Difference) => `${DIFFER_NAMES[figure] ?? figure}: issued ${differValue(figure, issued)}, now ${differValue(figure, now)}`,
   thisNight: 'night',
   past: (n: number, date: string) => (n === 0 ? `no earlier ${weekday(date)}s` : `last ${plural(n, weekday(date))}`),
   earlier: 'Night before',
@@ -87,11 +89,13 @@ export const wording = {
   ],
 };
 
+type Difference = NightView['differs'][number];
+
 const DIFFER_NAMES: Record<string, string> = {
   frames: 'Frames', framesEstimated: 'Estimated frames', deliveries: 'Deliveries', games: 'Games', stops: 'Machine stops', calls: 'Calls', bowlerCalls: 'Bowlers’ calls',
   foreignCalls: 'Foreign objects', occupancy: 'Occupancy', occupancyInService: 'Occupancy of lanes in service', downMs: 'Downtime', wantedDownMs: 'Downtime wanted',
   leagueLostMs: 'League minutes lost', acknowledgedMs: 'Acknowledged, median', onLaneMs: 'Mechanic on lane, median', restoredMs: 'Restored, median',
-  ready: 'Sessions ready', readyOf: 'Sessions', lanesDressed: 'Lanes dressed', dressedUl: 'Conditioner',
+  playedMs: 'Time played', ready: 'Sessions ready', readyOf: 'Sessions', lanesDressed: 'Lanes dressed', dressedUl: 'Conditioner',
 };
 
 export const POSITIONS: Record<string, string> = {
@@ -99,7 +103,7 @@ export const POSITIONS: Record<string, string> = {
 };
 
 /** A value of a difference, by its figure. */
-export function differValue(figure: string, value: number | null): string {
+function differValue(figure: string, value: number | null): string {
   if (value === null) return '–';
   if (figure.endsWith('Ms')) return duration(value);
   if (figure === 'dressedUl') return millilitres(value, 1);
