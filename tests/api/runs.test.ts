@@ -107,6 +107,36 @@ describe('a run that a machine tells', () => {
   });
 });
 
+describe('a machine that counts its runs from one every day', () => {
+  it('writes over no run of the day before, whichever arrives first', async () => {
+    const { send, runs, go, manager, written } = await house();
+    const day = -24 * 60;
+    const first = [started('1', [1, 2], day - 20), dressed('1', 1, day - 18), dressed('1', 2, day - 16), { type: 'run.finished', data: { machine: 'm1', run: '1' }, time: at(day - 15) }];
+    const second = [started('1', [3], -20), dressed('1', 3, -18)];
+    await send(...first);
+    const before = await runs('2026-05-13');
+    expect(before).toMatchObject([{ run: '1', status: 'finished', lanes: [1, 2], done: 2 }]);
+    await send(...second);
+    expect(await runs('2026-05-13')).toEqual(before);
+    expect(await runs()).toMatchObject([{ run: '1', status: 'under-way', lanes: [3], done: 1 }]);
+    expect((await written()).slice(1)).toEqual([2, 3]);
+    const figures = good(await go(manager, 'GET', '/nights/2026-05-13')).body as { figures: { dressed: { lanes: number } } };
+    expect(figures.figures.dressed.lanes).toBe(2);
+
+    const other = await house();
+    await other.send(...second);
+    await other.send(...first);
+    const view = async (of: typeof other) => [await of.runs('2026-05-13'), await of.runs()];
+    expect(await view(other)).toEqual([before, await runs()]);
+  });
+
+  it('one that stands twice in a night is listed twice', async () => {
+    const { send, runs } = await house();
+    await send(started('1', [1], -40), dressed('1', 1, -38), { type: 'run.finished', data: { machine: 'm1', run: '1' }, time: at(-37) }, started('1', [1], -10), dressed('1', 1, -8));
+    expect((await runs()).map(({ key, status, done }) => [key, status, done])).toEqual([[`m1/1/${at(-40)}`, 'finished', 1], [`m1/1/${at(-10)}`, 'under-way', 1]]);
+  });
+});
+
 describe('a run that is written down afterwards', () => {
   it('stands at its own time, its volumes from the pattern and marked so', async () => {
     const { send, record, runs, laneOf, mechanic } = await house();
@@ -116,7 +146,7 @@ describe('a run that is written down afterwards', () => {
     // Twenty minutes in four equal parts. 4 loads × 37 boards × 40 µL = 5 920 µL.
     const end = (part: number): number => at(-40 + 5 * part) - 1;
     expect(made.body).toMatchObject({
-      key: 'm1/evening', status: 'aborted', entered: 'hand', reason: 'Cord caught', startAt: at(-40), endAt: at(-20), done: 2, pattern: 'house', revision: 1,
+      key: `m1/evening/${at(-40)}`, status: 'aborted', entered: 'hand', reason: 'Cord caught', startAt: at(-40), endAt: at(-20), done: 2, pattern: 'house', revision: 1,
       outcomes: [
         { lane: 1, outcome: 'dressed', startedAt: at(-40), finishedAt: end(1), aUl: 5_920, bUl: null, measured: false }, { lane: 2, outcome: 'skipped', reason: 'Party', aUl: null },
         { lane: 3, outcome: 'dressed', startedAt: at(-30), finishedAt: end(3), aUl: 5_920 }, { lane: 4, outcome: 'broken-off', reason: 'Cord caught', aUl: null },

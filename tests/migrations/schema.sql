@@ -375,7 +375,7 @@ CREATE TABLE `readiness_weight` (
 
 CREATE TABLE `run` (
   `centre_id` binary(16) NOT NULL,
-  `run_key` varchar(161) CHARACTER SET utf8mb4 COLLATE utf8mb4_nopad_bin NOT NULL,
+  `run_key` varchar(176) CHARACTER SET utf8mb4 COLLATE utf8mb4_nopad_bin NOT NULL,
   `version` bigint(20) unsigned NOT NULL,
   `machine` varchar(80) CHARACTER SET utf8mb4 COLLATE utf8mb4_nopad_bin NOT NULL,
   `run` varchar(80) CHARACTER SET utf8mb4 COLLATE utf8mb4_nopad_bin NOT NULL,
@@ -395,7 +395,7 @@ CREATE TABLE `run` (
 
 CREATE TABLE `run_lane` (
   `centre_id` binary(16) NOT NULL,
-  `run_key` varchar(161) CHARACTER SET utf8mb4 COLLATE utf8mb4_nopad_bin NOT NULL,
+  `run_key` varchar(176) CHARACTER SET utf8mb4 COLLATE utf8mb4_nopad_bin NOT NULL,
   `lane` tinyint(3) unsigned NOT NULL,
   `version` bigint(20) unsigned NOT NULL,
   `position` smallint(5) unsigned NOT NULL,

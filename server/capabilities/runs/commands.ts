@@ -2,7 +2,7 @@ import type { BodyOf } from '#shared/contracts/contract.ts';
 import type { runContracts } from '#shared/contracts/runs.ts';
 import type { Person } from '#shared/domain/journal/fact.ts';
 import { cannotLay } from '#shared/domain/runs/capability.ts';
-import { runKey } from '#shared/domain/runs/fold.ts';
+import { runWith } from '#shared/domain/runs/fold.ts';
 import type { Run } from '#shared/domain/runs/state.ts';
 import { patternVolume } from '#shared/domain/runs/volume.ts';
 import { conflict, invalid, notFound, Refusal } from '#server/platform/http/refusal.ts';
@@ -54,7 +54,7 @@ const lastOf = (house: HouseAt, machine: string): number =>
   Math.max(0, ...[...Object.values(house.state.runs.active), ...house.state.runs.ended].filter((r) => r.machine === machine).map((r) => r.lastAt));
 
 const runOf = (house: HouseAt, machine: string, run: string, earlier: Run | null): Run | null =>
-  house.state.runs.active[runKey(machine, run)] ?? house.state.runs.ended.findLast((r) => r.key === runKey(machine, run)) ?? earlier;
+  runWith(house.state.runs, machine, run) ?? earlier;
 
 /** A code that this machine hasn't used: the one given, else the next whole number of its runs. */
 function nextCode(house: HouseAt, machine: string, given: string | undefined, earlier: Run | null): string {
@@ -69,17 +69,17 @@ function nextCode(house: HouseAt, machine: string, given: string | undefined, ea
 }
 
 /** `earlier` here and below: the run of that machine and code in the tables, or null; those that ended before the last cut are only there. */
-export function planRun(house: HouseAt, library: Library, body: Plan, by: Person, now: number, earlier: Run | null): { decision: Decision<HouseAt>; key: string } {
+export function planRun(house: HouseAt, library: Library, body: Plan, by: Person, now: number, earlier: Run | null): { decision: Decision<HouseAt>; run: string } {
   demandLanes(house, body.lanes);
   const revision = demandRevision(library, body.machine, body.pattern, body.revision ?? null);
   if (body.startAt < now - 60_000) throw invalid('run.start-past', '/startAt');
   const run = nextCode(house, body.machine, body.run, earlier);
   const data = { machine: body.machine, run, pattern: revision.code, revision: revision.revision, lanes: body.lanes, startAt: body.startAt };
-  return { decision: done([{ type: 'run.planned', data, by, after: lastOf(house, body.machine) }]), key: runKey(body.machine, run) };
+  return { decision: done([{ type: 'run.planned', data, by, after: lastOf(house, body.machine) }]), run };
 }
 
 /** A run written down afterwards: its facts stand at its own times. Volumes are computed from the pattern and marked so. */
-export function recordRun(house: HouseAt, library: Library, body: Recorded, by: Person, now: number, earlier: Run | null): { decision: Decision<HouseAt>; key: string } {
+export function recordRun(house: HouseAt, library: Library, body: Recorded, by: Person, now: number, earlier: Run | null): { decision: Decision<HouseAt>; run: string } {
   demandLanes(house, body.lanes.map((l) => l.lane));
   demandOneBreak(body.lanes);
   const { machine, startedAt, finishedAt } = body;
@@ -106,7 +106,7 @@ export function recordRun(house: HouseAt, library: Library, body: Recorded, by: 
   const start: NewFact = {
     type: 'run.started', data: { machine, run, ...(revision ? { pattern: revision.code, revision: revision.revision } : {}), lanes: body.lanes.map((l) => l.lane) }, by, at: startedAt,
   };
-  return { decision: done([start, ...lanes, end]), key: runKey(machine, run) };
+  return { decision: done([start, ...lanes, end]), run };
 }
 
 export function cancelRun(house: HouseAt, machine: string, run: string, reason: string, by: Person, earlier: Run | null): Decision<HouseAt> {

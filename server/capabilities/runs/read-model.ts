@@ -9,8 +9,9 @@ export async function runsWithin(db: Knex, centreId: Buffer, from: number, to: n
   return withLanes(db, centreId, rows);
 }
 
-export async function runByKey(db: Knex, centreId: Buffer, key: string): Promise<Run | null> {
-  const rows = (await db('run').where({ centre_id: centreId, run_key: key })) as RunRow[];
+/** The run that had a machine's code last. */
+export async function runByCode(db: Knex, centreId: Buffer, machine: string, run: string): Promise<Run | null> {
+  const rows = (await db('run').where({ centre_id: centreId, machine, run }).orderBy('last_at', 'desc').limit(1)) as RunRow[];
   return (await withLanes(db, centreId, rows))[0] ?? null;
 }
 

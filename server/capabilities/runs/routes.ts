@@ -2,7 +2,7 @@ import { runContracts as c } from '#shared/contracts/runs.ts';
 import { businessDay, businessDayAt, isDate } from '#shared/domain/business-day.ts';
 import type { House } from '#shared/domain/house/state.ts';
 import { median } from '#shared/domain/numbers/percentiles.ts';
-import { runKey } from '#shared/domain/runs/fold.ts';
+import { runWith } from '#shared/domain/runs/fold.ts';
 import type { Run } from '#shared/domain/runs/state.ts';
 import type { Deps } from '#server/deps.ts';
 import { personOf } from '#server/platform/http/person.ts';
@@ -13,7 +13,7 @@ import { cancelRun, planRun, recordRun } from './commands.ts';
 import type { createLibraries, Library } from './library.ts';
 import { machineLevels } from './machines.ts';
 import { addMachine, addPattern, revisePattern } from './patterns.ts';
-import { lanesDressed, runByKey, runsWithin } from './read-model.ts';
+import { lanesDressed, runByCode, runsWithin } from './read-model.ts';
 import { tonightView, type WantsOfNight } from './tonight.ts';
 import { patternSummary, revisionView, runDetail } from './view.ts';
 
@@ -86,24 +86,24 @@ function machineRoutes({ db, ledger }: RunsDeps, libraries: Libraries): Route[] 
 const copy = <T>(value: T): never => structuredClone(value) as never;
 
 function runRoutes({ db, ledger }: RunsDeps, libraries: Libraries, wants: WantsOfNight): Route[] {
-  const shown = async (centre: CentreRef, state: House, key: string) => {
-    const run = state.runs.active[key] ?? state.runs.ended.findLast((r) => r.key === key) ?? (await runByKey(db, centre.id, key));
-    if (!run) throw notFound('run.unknown');
-    return runDetail(run, state.runs, await libraries.of(centre));
+  const shown = async (centre: CentreRef, state: House, machine: string, run: string) => {
+    const found = runWith(state.runs, machine, run) ?? (await runByCode(db, centre.id, machine, run));
+    if (!found) throw notFound('run.unknown');
+    return runDetail(found, state.runs, await libraries.of(centre));
   };
   /** Decides with the library as it is and the run that has the code already, if one has; answers with the run. */
   const decide = async (
     centre: CentreRef, { machine, run }: { machine: string; run?: string },
-    make: (house: HouseAt, library: Library, now: number, earlier: Run | null) => { decision: ReturnType<typeof cancelRun>; key: string },
+    make: (house: HouseAt, library: Library, now: number, earlier: Run | null) => { decision: ReturnType<typeof cancelRun>; run: string },
   ) => {
     const library = await libraries.of(centre);
-    let key = '';
+    let code = '';
     const after = await ledger.decide(centre, async (house, now, trx) => {
-      const made = make(house, library, now, run === undefined ? null : await runByKey(trx, centre.id, runKey(machine, run)));
-      key = made.key;
+      const made = make(house, library, now, run === undefined ? null : await runByCode(trx, centre.id, machine, run));
+      code = made.run;
       return made.decision;
     });
-    return shown(centre, after.state, key);
+    return shown(centre, after.state, machine, code);
   };
   return [
     serve(c.list, async ({ centre, query, now }) => {
@@ -121,7 +121,7 @@ function runRoutes({ db, ledger }: RunsDeps, libraries: Libraries, wants: WantsO
     serve(c.plan, ({ centre, body, actor }) => decide(centre, body, (house, library, now, earlier) => planRun(house, library, body, personOf(actor), now, earlier))),
     serve(c.record, ({ centre, body, actor }) => decide(centre, body, (house, library, now, earlier) => recordRun(house, library, body, personOf(actor), now, earlier))),
     serve(c.cancel, ({ centre, params, body, actor }) => decide(centre, params, (house, _library, _now, earlier) => ({
-      decision: cancelRun(house, params.machine, params.run, body.reason, personOf(actor), earlier), key: runKey(params.machine, params.run),
+      decision: cancelRun(house, params.machine, params.run, body.reason, personOf(actor), earlier), run: params.run,
     }))),
   ];
 }

@@ -109,6 +109,13 @@ describe('runs', () => {
     expect(house.runs.ended).toMatchObject([{ run: '118', status: 'finished', reason: 'not-closed' }]);
     expect(Object.keys(house.runs.active)).toEqual(['m1/119']);
   });
+  it('a code that a machine gives again is another run; a lane told late still goes to the one that had it', () => {
+    const first = fold(fact(10, 'run.started', run), fact(20, 'run.lane.dressed', { ...run, lane: 1, startedAt: 11, finishedAt: 20 }), fact(30, 'run.finished', run), fact(32, 'run.lane.skipped', { ...run, lane: 2, reason: 'occupied' }));
+    const again = [fact(50, 'run.started', { ...run, pattern: 'house' }), fact(60, 'run.lane.dressed', { ...run, lane: 3, startedAt: 51, finishedAt: 60 })].reduce(foldHouse, first);
+    expect(again.runs.ended).toEqual(first.runs.ended);
+    expect(again.runs.ended).toMatchObject([{ key: 'm1/118/10', done: [{ lane: 1 }, { lane: 2 }] }]);
+    expect(again.runs.active).toMatchObject({ 'm1/118': { key: 'm1/118/50', startedAt: 50, pattern: 'house', done: [{ lane: 3 }] } });
+  });
 });
 
 it('drops what has ended at a cut and keeps what goes on', () => {

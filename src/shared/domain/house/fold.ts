@@ -6,12 +6,12 @@ import { changeLane } from '../floor/lane-change.ts';
 import { inService } from '../floor/machine.ts';
 import type { FloorState } from '../floor/state.ts';
 import type { Fact } from '../journal/fact.ts';
-import { foldRuns, runKey } from '../runs/fold.ts';
+import { foldRuns, runWith } from '../runs/fold.ts';
 import type { RunsState } from '../runs/state.ts';
 import type { House } from './state.ts';
 
 /** Raised by one whenever a fold gives another state for the same facts: stored states are then folded anew. */
-export const HOUSE_FOLD_VERSION = 2;
+export const HOUSE_FOLD_VERSION = 3;
 
 /** (house, fact) → house, for facts in their order. The only place where one slice's fact reaches another slice's state. */
 export function foldHouse(house: House, fact: Fact): House {
@@ -56,7 +56,7 @@ function eachLane(floor: FloorState, call: Call, fact: Fact, change: Parameters<
 function fromRuns(floor: FloorState, fact: Fact, runs: RunsState): FloorState {
   if (fact.type === 'run.lane.dressed') {
     const { machine, run } = fact.data;
-    const { pattern = null, revision = null } = findRun(runs, machine, run) ?? {};
+    const { pattern = null, revision = null } = runWith(runs, machine, run) ?? {};
     return changeLane(floor, fact.data.lane, fact, () => ({
       dressed: { at: fact.time, machine, run, pattern, revision }, brokenOff: null, deliveriesSince: 0, deliveriesSinceBy: {},
     }));
@@ -72,12 +72,9 @@ function fromRuns(floor: FloorState, fact: Fact, runs: RunsState): FloorState {
 /** A start that comes after lanes of its run were dressed says their pattern too. */
 function named(floor: FloorState, fact: Extract<Fact, { type: 'run.started' }>, runs: RunsState): FloorState {
   const { machine, run } = fact.data;
-  const { pattern = null, revision = null } = findRun(runs, machine, run) ?? {};
+  const { pattern = null, revision = null } = runWith(runs, machine, run) ?? {};
   return floor.reduce<FloorState>((all, lane) => {
     const mine = lane.dressed && lane.dressed.machine === machine && lane.dressed.run === run && lane.dressed.pattern === null;
     return mine && lane.dressed ? changeLane(all, lane.lane, fact, () => ({ dressed: lane.dressed && { ...lane.dressed, pattern, revision } })) : all;
   }, floor);
 }
-
-const findRun = (runs: RunsState, machine: string, run: string) =>
-  runs.active[runKey(machine, run)] ?? runs.ended.findLast((r) => r.key === runKey(machine, run));

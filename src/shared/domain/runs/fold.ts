@@ -2,7 +2,12 @@ import type { Fact, FactOf } from '../journal/fact.ts';
 import type { MachineLevels, Run, RunLane, RunsState } from './state.ts';
 
 const PACES_KEPT = 40;
-export const runKey = (machine: string, run: string): string => `${machine}/${run}`;
+const codeOf = ({ machine, run }: Pick<Run, 'machine' | 'run'>): string => `${machine}/${run}`;
+
+/** The run that has a machine's code now, or had it last since the checkpoint. */
+export const runWith = (runs: RunsState, machine: string, run: string): Run | undefined =>
+  runs.active[codeOf({ machine, run })] ?? runs.ended.findLast((r) => r.machine === machine && r.run === run);
+
 const microlitres = (ml: number | undefined): number | null => (ml === undefined ? null : Math.round(ml * 1000));
 
 /** (runs, fact) → runs, for facts in their order. */
@@ -26,10 +31,14 @@ const blank = (lane: number): RunLane => ({
   lane, outcome: 'dressed', startedAt: null, finishedAt: null, aUl: null, bUl: null, cleanerUl: null, measured: false, reason: null,
 });
 
+/** The run a fact is about. A start under the code of a run that has ended is another run: nothing of the old one is written over. */
 function known(runs: RunsState, fact: RunFact): Run {
-  const key = runKey(fact.data.machine, fact.data.run);
-  return runs.active[key] ?? runs.ended.findLast((r) => r.key === key) ?? {
-    key, machine: fact.data.machine, run: fact.data.run, pattern: null, revision: null, lanes: null, status: 'under-way', plannedStart: null,
+  const { machine, run } = fact.data;
+  const found = runWith(runs, machine, run);
+  const begins = fact.type === 'run.started' || fact.type === 'run.planned';
+  if (found && !(begins && (found.status === 'finished' || found.status === 'aborted'))) return found;
+  return {
+    key: `${codeOf({ machine, run })}/${fact.time}`, machine, run, pattern: null, revision: null, lanes: null, status: 'under-way', plannedStart: null,
     startedAt: null, endedAt: null, reason: null, entered: fact.by?.kind === 'user' ? 'hand' : 'gateway', done: [], lastAt: fact.time,
   };
 }
@@ -40,8 +49,9 @@ const isActive = (run: Run): boolean => run.status === 'planned' || run.status =
 const begun = (run: Run): Run => (run.status === 'planned' || run.status === 'cancelled' ? { ...run, status: 'under-way', endedAt: null, reason: null } : run);
 
 function put(runs: RunsState, run: Run): RunsState {
-  const { [run.key]: _before, ...active } = runs.active;
-  if (isActive(run)) return { ...runs, active: { ...active, [run.key]: run }, ended: without(runs.ended, run.key) };
+  const code = codeOf(run);
+  const { [code]: _before, ...active } = runs.active;
+  if (isActive(run)) return { ...runs, active: { ...active, [code]: run }, ended: without(runs.ended, run.key) };
   const place = runs.ended.findLastIndex((r) => r.key === run.key);
   return { ...runs, active, ended: place < 0 ? [...runs.ended, run] : runs.ended.with(place, run) };
 }

@@ -12,7 +12,7 @@ export interface RunLane {
 }
 
 export interface Run {
-  /** `machine/run`: the code a machine gave it, unique with the machine. */
+  /** `machine/run/begun`: the machine, the code it gave, and the time of the run's first fact (epoch ms), as machines that count from one every day give a code again. */
   key: string;
   machine: string;
   run: string;
@@ -40,7 +40,7 @@ export interface MachineLevels {
   batteryPct: number | null;
 }
 
-/** `active` = planned or under way, by key; `ended` since the last checkpoint, oldest first. Replaced, never changed in place. */
+/** `active` = planned or under way, by `machine/run`: one at a time has a code; `ended` since the last checkpoint, oldest first. Replaced, never changed in place. */
 export interface RunsState {
   active: Readonly<Record<string, Run>>;
   ended: readonly Run[];
