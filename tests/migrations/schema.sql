@@ -47,6 +47,7 @@ CREATE TABLE `centre` (
   `lanes` tinyint(3) unsigned NOT NULL,
   `opening` longtext CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL CHECK (json_valid(`opening`)),
   `created_at` datetime(3) NOT NULL,
+  `rules` longtext CHARACTER SET utf8mb4 COLLATE utf8mb4_bin DEFAULT NULL CHECK (json_valid(`rules`)),
   PRIMARY KEY (`id`),
   UNIQUE KEY `centre_slug` (`slug`)
 ) ENGINE=InnoDB DEFAULT CHARSET=utf8mb4 COLLATE=utf8mb4_unicode_ci;

@@ -1,6 +1,7 @@
 import type { CallDetail } from '#shared/contracts/calls.ts';
 import type { GatewaySettings } from '#shared/contracts/centre.ts';
 import type { SessionView } from '#shared/contracts/readiness.ts';
+import { USUAL_RULES } from '#shared/domain/house-rules.ts';
 import { ISOLATION_STEPS, RELEASE_STEPS } from '#shared/domain/calls/lockout-steps.ts';
 import { ask } from './ask.ts';
 import { aLeague, aRevision, CAN, type SampleHouse, type Who } from './sample-house.ts';
@@ -133,6 +134,7 @@ export const SAMPLES: Readonly<Record<string, Sample>> = {
   },
 
   'centre.settings': () => ({}),
+  'centre.saveRules': () => ({ body: { ...USUAL_RULES, deskMin: 8 } }),
   'centre.save': () => ({ body: { name: 'Sample House', zone: 'UTC', cut: 240, opening: Array.from({ length: 7 }, () => ({ from: 600, to: 1440 })) } }),
   'centre.lane': () => ({ params: { lane: 12 }, body: { family: 'string', certifiedUntil: '2027-01-31', stopCoverage: 'heard' } }),
   'centre.addGateway': (house) => ({ body: { name: `Gateway ${house.next()}` } }),

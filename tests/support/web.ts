@@ -3,6 +3,7 @@ import { once } from 'node:events';
 import { createServer } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import type { Knex } from 'knex';
+import { USUAL_RULES } from '#shared/domain/house-rules.ts';
 import { createAccounts, type Accounts } from '#server/capabilities/accounts/index.ts';
 import type { Config } from '#server/config.ts';
 import type { Clock } from '#server/platform/clock.ts';
@@ -63,7 +64,8 @@ export async function startWeb(db: Knex, { clock, config = {}, routes = [], stri
 type Row = { id: Buffer; slug: string; name: string; zone: string; cut: number; lanes: number };
 
 async function centreRow(db: Knex, slug: string): Promise<CentreRef | null> {
-  return (await db<Row>('centre').where('slug', slug).first('id', 'slug', 'name', 'zone', 'cut', 'lanes')) ?? null;
+  const row = await db<Row>('centre').where('slug', slug).first('id', 'slug', 'name', 'zone', 'cut', 'lanes');
+  return row ? { ...row, rules: USUAL_RULES } : null;
 }
 
 let made = 0;
@@ -73,8 +75,8 @@ export async function makeCentre(db: Knex, clock: Clock): Promise<CentreRef> {
   made += 1;
   const id = newId(clock.now());
   const slug = `house-${id.slice(-12)}-${made}`;
-  const centre: CentreRef = { id: toBinary(id), slug, name: `House ${made}`, zone: 'Europe/Berlin', cut: 240, lanes: 32 };
-  await db('centre').insert({ ...centre, opening: JSON.stringify(Array.from({ length: 7 }, () => [600, 1380])), created_at: toRowTime(clock.now()) });
+  const centre: CentreRef = { id: toBinary(id), slug, name: `House ${made}`, zone: 'Europe/Berlin', cut: 240, lanes: 32, rules: USUAL_RULES };
+  await db('centre').insert({ ...centre, rules: JSON.stringify(centre.rules), opening: JSON.stringify(Array.from({ length: 7 }, () => [600, 1380])), created_at: toRowTime(clock.now()) });
   await openJournal(db, centre.id);
   return centre;
 }

@@ -1,5 +1,6 @@
 import type { CallView } from '#shared/contracts/floor.ts';
 import type { Call } from '#shared/domain/calls/state.ts';
+import type { HouseRules } from '#shared/domain/house-rules.ts';
 import type { House } from '#shared/domain/house/state.ts';
 import type { Centre } from '#server/capabilities/centre/index.ts';
 import type { Notices } from '#server/capabilities/notices/index.ts';
@@ -15,8 +16,8 @@ import { callView } from './view.ts';
 export interface Calls {
   routes: Route[];
   /** A call as the floor shows it. */
-  callView(call: Call, house: House, now: number): CallView;
-  /** Queues the one letter about each call unanswered for three minutes at `now`; returns how many were new. */
+  callView(call: Call, house: House, now: number, rules: HouseRules): CallView;
+  /** Queues the one letter about each call that has waited too long at `now`; returns how many were new. */
   mailUnanswered(now: number): Promise<number>;
 }
 

@@ -5,6 +5,7 @@ import type { Family } from '#shared/domain/calls/causes.ts';
 import type { Call } from '#shared/domain/calls/state.ts';
 import { callFacts, callOrder } from '#shared/domain/calls/view.ts';
 import { openCall } from '#shared/domain/calls/work.ts';
+import { escalationBy } from '#shared/domain/house-rules.ts';
 import type { House } from '#shared/domain/house/state.ts';
 import { notFound } from '#server/platform/http/refusal.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
@@ -33,7 +34,7 @@ export function callsScreen(ledger: Ledger, ended: CallsReadModel, familyOfLane:
       ended.causeTimes(centre, call.equipment, now - CAUSES_DAYS * DAY),
       familyOfLane(centre, call.lane),
     ]);
-    return callDetail(call, house, now, { last, causeTimes, family });
+    return callDetail(call, house, now, { last, causeTimes, family, rules: centre.rules });
   };
   return {
     detail,
@@ -47,9 +48,10 @@ export function callsScreen(ledger: Ledger, ended: CallsReadModel, familyOfLane:
       const { state: house } = await ledger.read(centre);
       const day = businessDayAt(now, centre.zone, centre.cut);
       const order = callOrder(null);
-      const open = Object.values(house.calls.open).toSorted((a, b) => order(callFacts(a, house, now), callFacts(b, house, now)));
+      const facts = (call: Call) => callFacts(call, house, now, escalationBy(centre.rules));
+      const open = Object.values(house.calls.open).toSorted((a, b) => order(facts(a), facts(b)));
       const closed = await ended.endedBetween(centre, day.from, day.to);
-      return { open: open.map((call) => callView(call, house, now)), closed: closed.map((call) => closedCall(call, house, now)), lanes: centre.lanes };
+      return { open: open.map((call) => callView(call, house, now, centre.rules)), closed: closed.map((call) => closedCall(call, house, now, centre.rules)), lanes: centre.lanes };
     },
 
     /** Which causes fit a call; null while nothing is known of it: then the command refuses it anyway. */

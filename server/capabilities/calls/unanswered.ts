@@ -1,4 +1,4 @@
-import { DEFAULT_ESCALATION, unansweredSince } from '#shared/domain/calls/escalation.ts';
+import { unansweredSince } from '#shared/domain/calls/escalation.ts';
 import type { Call } from '#shared/domain/calls/state.ts';
 import { unansweredMail } from '#shared/text/en/calls.ts';
 import { timeOfDay } from '#shared/text/en/formats.ts';
@@ -21,7 +21,7 @@ export function unansweredMails({ db, ledger, config }: Pick<Deps, 'db' | 'ledge
   const written = new Set<string>();
   const inCentre = async (centre: CentreRef, now: number): Promise<number> => {
     const { state } = await ledger.read(centre);
-    const due = Object.values(state.calls.open).filter((call) => !written.has(call.id) && now - (unansweredSince(call, now) ?? now) >= DEFAULT_ESCALATION.otherMechanicMs);
+    const due = Object.values(state.calls.open).filter((call) => !written.has(call.id) && now - (unansweredSince(call, now) ?? now) >= centre.rules.otherMechanicMin * MINUTE);
     if (due.length === 0) return 0;
     const to = await sources.recipients(centre);
     const letters = due.flatMap((call) => to.map((recipient) => ({ ...letterOf(call, centre, config.publicUrl), to: recipient })));
@@ -42,7 +42,7 @@ export function unansweredMails({ db, ledger, config }: Pick<Deps, 'db' | 'ledge
 
 function letterOf(call: Call, centre: CentreRef, publicUrl: string | null): Omit<Mail, 'to'> {
   const address = publicUrl === null ? null : `${publicUrl}/${centre.slug}/calls/${call.id}`;
-  const text = unansweredMail.text(call, timeOfDay(call.raisedAt, centre.zone), DEFAULT_ESCALATION.otherMechanicMs / MINUTE, address);
+  const text = unansweredMail.text(call, timeOfDay(call.raisedAt, centre.zone), centre.rules.otherMechanicMin, address);
   const html = text.split('\n\n').map((part) => `<p>${escaped(part)}</p>`).join('\n');
   return { centreId: centre.id, key: `call-unanswered/${call.id}`, subject: unansweredMail.subject(call, centre.name), text, html };
 }

@@ -1,16 +1,16 @@
 import type { CallView } from '#shared/contracts/floor.ts';
 import type { CallDetail, ClosedCall } from '#shared/contracts/calls.ts';
-import type { EscalationRules } from '#shared/domain/calls/escalation.ts';
 import { pastCall, stopsInLastFrames } from '#shared/domain/calls/history.ts';
 import type { Call } from '#shared/domain/calls/state.ts';
 import { callFacts } from '#shared/domain/calls/view.ts';
 import { neighbourOf } from '#shared/domain/equipment.ts';
+import { escalationBy, type HouseRules } from '#shared/domain/house-rules.ts';
 import type { House } from '#shared/domain/house/state.ts';
 import { useNames } from '#shared/text/en/calls.ts';
 
 /** A call as screens and the floor show it. */
-export function callView(call: Call, house: House, now: number, rules?: EscalationRules): CallView {
-  const { playing, ...facts } = callFacts(call, house, now, rules);
+export function callView(call: Call, house: House, now: number, rules: HouseRules): CallView {
+  const { playing, ...facts } = callFacts(call, house, now, escalationBy(rules));
   return { ...facts, playing: playing && (playing.label ?? useNames[playing.kind]) };
 }
 
@@ -19,6 +19,7 @@ export interface Around {
   last: CallDetail['history']['last'];
   causeTimes: Record<string, number>;
   family: CallDetail['family'];
+  rules: HouseRules;
 }
 
 export function callDetail(call: Call, house: House, now: number, around: Around): CallDetail {
@@ -26,7 +27,7 @@ export function callDetail(call: Call, house: House, now: number, around: Around
   const neighbour = call.scope === 'house' ? undefined : house.floor[other - 1];
   const ended = call.status === 'closed' ? pastCall(call) : null;
   return {
-    ...callView(call, house, now),
+    ...callView(call, house, now, around.rules),
     steps: call.steps.map((step) => ({ at: step.at, kind: step.kind, by: step.by?.name ?? null, text: step.text })),
     lockout: call.lockout && {
       by: call.lockout.by.name, byId: call.lockout.by.id, begunAt: call.lockout.begunAt, steps: call.lockout.steps,
@@ -41,7 +42,7 @@ export function callDetail(call: Call, house: House, now: number, around: Around
   };
 }
 
-export function closedCall(call: Call, house: House, now: number): ClosedCall {
+export function closedCall(call: Call, house: House, now: number, rules: HouseRules): ClosedCall {
   const past = pastCall(call);
-  return { ...callView(call, house, now), playing: null, closedAt: past.at, closedBy: past.by, cause: past.cause, note: past.note, downMs: past.downMs };
+  return { ...callView(call, house, now, rules), playing: null, closedAt: past.at, closedBy: past.by, cause: past.cause, note: past.note, downMs: past.downMs };
 }

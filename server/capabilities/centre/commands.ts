@@ -1,6 +1,8 @@
 import type { CentreSettings, LaneSettings } from '#shared/contracts/centre.ts';
 import { isDate } from '#shared/domain/business-day.ts';
-import { conflict, invalid, notFound } from '#server/platform/http/refusal.ts';
+import { type HouseRules, rulesFaults } from '#shared/domain/house-rules.ts';
+import type { Topic } from '#shared/realtime/events.ts';
+import { conflict, invalid, notFound, Refusal } from '#server/platform/http/refusal.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import type { Decision, Ledger } from '#server/platform/journal/ledger.ts';
 import type { Gateways } from './gateways.ts';
@@ -14,16 +16,23 @@ const KEYS_AT_ONCE = 2;
 export function centreCommands({ ledger, store, gatewayRows, gateways, forget }: {
   ledger: Ledger; store: CentreStore; gatewayRows: GatewayStore; gateways: Gateways; forget: () => void;
 }) {
-  const settle = <R>(centre: CentreRef, decide: (now: number, trx: Parameters<Parameters<Ledger['decide']>[1]>[2]) => Promise<Pick<Decision<R>, 'write'> & { answer: R }>) =>
+  const settle = <R>(centre: CentreRef, decide: (now: number, trx: Parameters<Parameters<Ledger['decide']>[1]>[2]) => Promise<Pick<Decision<R>, 'write'> & { answer: R }>, also: readonly Topic[] = []) =>
     ledger.decide<R>(centre, async (_house, now, trx) => {
       const { write, answer } = await decide(now, trx);
-      return { facts: [], write, topics: ['settings', 'floor'], result: () => answer };
+      return { facts: [], write, topics: ['settings', 'floor', ...also], result: () => answer };
     });
 
   return {
     async save(centre: CentreRef, settings: CentreSettings): Promise<void> {
       await settle(centre, async () => ({ write: (trx) => store.saveSettings(trx, centre.id, settings), answer: null }));
       forget();
+    },
+    async saveRules(centre: CentreRef, rules: HouseRules): Promise<HouseRules> {
+      const faults = rulesFaults(rules).map(({ field, code }) => ({ pointer: `/${field}`, code, params: {} }));
+      if (faults.length > 0) throw new Refusal(422, 'rules.contradict', {}, faults);
+      await settle(centre, async () => ({ write: (trx) => store.saveRules(trx, centre.id, rules), answer: null }), ['calls', 'sessions', 'runs']);
+      forget();
+      return rules;
     },
     async lane(centre: CentreRef, number: number, change: Partial<LaneSettings>): Promise<LaneSettings> {
       if (change.certifiedUntil && !isDate(change.certifiedUntil)) throw invalid('date.invalid', '/certifiedUntil');

@@ -28,14 +28,15 @@ export function centreRoutes({ commands, store, gatewayRows, gateways }: Parts):
   }
   return [
     serve(centreContracts.settings, async ({ centre, now }) => {
-      const { slug, name, zone, cut, lanes: count } = centre;
+      const { slug, name, zone, cut, lanes: count, rules } = centre;
       const [opening, lanes, all] = [await store.opening(centre.id), await store.lanes(centre.id), await gatewaySettings(centre, now)];
-      return { centre: { slug, name, zone, cut, opening, lanes: count }, lanes, gateways: all };
+      return { centre: { slug, name, zone, cut, opening, lanes: count }, lanes, gateways: all, rules };
     }),
     serve(centreContracts.save, async ({ centre, body }) => {
       await commands.save(centre, body);
       return { ok: true as const };
     }),
+    serve(centreContracts.saveRules, ({ centre, body }) => commands.saveRules(centre, body)),
     serve(centreContracts.lane, ({ centre, params, body }) => commands.lane(centre, params.lane, body)),
     serve(centreContracts.addGateway, async ({ centre, body, now }) => {
       const { id, key } = await commands.addGateway(centre, body.name);

@@ -5,6 +5,7 @@ import { fromBinary, newId, toBinary } from '#server/platform/db/uuid.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import { conflict } from '#server/platform/http/refusal.ts';
 import type { GatewayNews, Sequences } from './gateway-news.ts';
+import { type CentreColumns, refOf } from './store.ts';
 
 interface GatewayRow {
   centre_id: Buffer;
@@ -28,7 +29,7 @@ interface KeyRow {
   revoked_at: Date | null;
 }
 
-interface HolderRow extends CentreRef {
+interface HolderRow extends CentreColumns {
   gateway: Buffer;
   gateway_name: string;
   revoked_at: Date | null;
@@ -102,10 +103,9 @@ export function gatewayStore(db: Knex) {
         .join('gateway as g', (on) => on.on('g.centre_id', 'k.centre_id').on('g.id', 'k.gateway_id'))
         .join('centre as c', 'c.id', 'k.centre_id')
         .where('k.hash', hash)
-        .first<HolderRow | undefined>('g.id as gateway', 'g.name as gateway_name', 'k.revoked_at', 'c.id', 'c.slug', 'c.name', 'c.zone', 'c.cut', 'c.lanes');
+        .first<HolderRow | undefined>('g.id as gateway', 'g.name as gateway_name', 'k.revoked_at', 'c.id', 'c.slug', 'c.name', 'c.zone', 'c.cut', 'c.lanes', 'c.rules');
       if (!row) return null;
-      const { id, slug, name, zone, cut, lanes } = row;
-      return { gateway: { id: fromBinary(row.gateway), name: row.gateway_name }, centre: { id, slug, name, zone, cut, lanes }, revoked: row.revoked_at !== null };
+      return { gateway: { id: fromBinary(row.gateway), name: row.gateway_name }, centre: refOf(row), revoked: row.revoked_at !== null };
     },
     async saveNews(centre: Buffer, gateway: string, news: GatewayNews): Promise<void> {
       const time = (at: number | null) => (at === null ? null : new Date(at));

@@ -1,5 +1,6 @@
 import type { Knex } from 'knex';
 import type { CentreSettings, LaneSettings, OpeningHours } from '#shared/contracts/centre.ts';
+import { type HouseRules, USUAL_RULES } from '#shared/domain/house-rules.ts';
 import { newId, toBinary } from '#server/platform/db/uuid.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import { openJournal } from '#server/platform/journal/head-store.ts';
@@ -12,6 +13,7 @@ interface CentreRow {
   cut: number;
   lanes: number;
   opening: OpeningHours;
+  rules: Partial<HouseRules> | null;
 }
 
 interface LaneRow {
@@ -28,7 +30,8 @@ export interface NewCentre extends CentreSettings {
   certifiedUntil: string | null;
 }
 
-const refOf = ({ id, slug, name, zone, cut, lanes }: CentreRow): CentreRef => ({ id, slug, name, zone, cut, lanes });
+export type CentreColumns = Pick<CentreRow, 'id' | 'slug' | 'name' | 'zone' | 'cut' | 'lanes' | 'rules'>;
+export const refOf = ({ id, slug, name, zone, cut, lanes, rules }: CentreColumns): CentreRef => ({ id, slug, name, zone, cut, lanes, rules: { ...USUAL_RULES, ...rules } });
 const laneOf = (row: LaneRow): LaneSettings => ({ lane: row.lane, family: row.family, certifiedUntil: row.certified_until, stopCoverage: row.stop_coverage });
 
 export function centreStore(db: Knex) {
@@ -61,10 +64,13 @@ export function centreStore(db: Knex) {
         await trx('lane').insert(rows);
         await openJournal(trx, id);
       });
-      return { id, slug, name, zone, cut, lanes };
+      return { id, slug, name, zone, cut, lanes, rules: USUAL_RULES };
     },
     async saveSettings(trx: Knex, centre: Buffer, { name, zone, cut, opening }: CentreSettings): Promise<void> {
       await trx('centre').where({ id: centre }).update({ name, zone, cut, opening: JSON.stringify(opening) });
+    },
+    async saveRules(trx: Knex, centre: Buffer, rules: HouseRules): Promise<void> {
+      await trx('centre').where({ id: centre }).update({ rules: JSON.stringify(rules) });
     },
     async saveLane(trx: Knex, centre: Buffer, lane: LaneSettings): Promise<void> {
       const change = { family: lane.family, certified_until: lane.certifiedUntil, stop_coverage: lane.stopCoverage };

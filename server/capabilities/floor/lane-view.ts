@@ -3,7 +3,7 @@ import type { LaneUseKind } from '#shared/domain/equipment.ts';
 import type { Call, CallStatus } from '#shared/domain/calls/state.ts';
 import type { LaneState, Use } from '#shared/domain/floor/state.ts';
 import type { House } from '#shared/domain/house/state.ts';
-import { filmStrength, freshness, hoursBetween } from '#shared/domain/runs/ageing.ts';
+import { type AgeingSettings, filmStrength, freshness, hoursBetween } from '#shared/domain/runs/ageing.ts';
 import { paceOf } from '#shared/domain/runs/lane-time.ts';
 import type { Run } from '#shared/domain/runs/state.ts';
 import type { PatternFacts } from './sources.ts';
@@ -18,6 +18,7 @@ export interface LaneContext {
   pattern: (code: string, revision: number | null) => PatternFacts | undefined;
   /** Ids of gateways that were silent for 90 s. */
   silent: ReadonlySet<string>;
+  ageing: AgeingSettings;
 }
 
 /** What a screen shows of one lane: state of the lane, its worst call, its film and what is on it. */
@@ -76,14 +77,14 @@ function useView(lane: LaneState, use: Use, { now, sessions }: LaneContext): Lan
 
 const kindOfSession = (session: SessionBar): LaneUseKind => (session.kind === 'practice' ? 'warmup' : session.kind);
 
-function filmView(lane: LaneState, { now, pattern }: LaneContext): LaneView['film'] {
+function filmView(lane: LaneState, { now, pattern, ageing }: LaneContext): LaneView['film'] {
   const dressed = lane.dressed;
   if (!dressed) return null;
   const age = { deliveries: lane.hears.deliveries ? lane.deliveriesSince : null, hours: hoursBetween(dressed.at, now) };
   const known = dressed.pattern === null ? undefined : pattern(dressed.pattern, dressed.revision);
-  const fresh = freshness(age);
+  const fresh = freshness(age, ageing);
   return {
-    lengthFt: known?.lengthFt ?? null, strength: Math.round((filmStrength(age).strength ?? 0) * 100) / 100, deliveries: lane.deliveriesSince,
+    lengthFt: known?.lengthFt ?? null, strength: Math.round((filmStrength(age, ageing).strength ?? 0) * 100) / 100, deliveries: lane.deliveriesSince,
     at: dressed.at, pattern: dressed.pattern, revision: dressed.revision, verified: known?.verified ?? false, freshness: fresh === 'unknown' ? 'ageing' : fresh,
   };
 }

@@ -1,5 +1,6 @@
 import type { FloorDelta, FloorSnapshot, LaneView } from '#shared/contracts/floor.ts';
 import { businessDayAt } from '#shared/domain/business-day.ts';
+import { ageingBy } from '#shared/domain/house-rules.ts';
 import type { LaneState } from '#shared/domain/floor/state.ts';
 import type { Topic } from '#shared/realtime/events.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
@@ -18,7 +19,7 @@ const CHANGES: Record<Topic, (keyof Parts | 'lanes')[]> = {
   leagues: ['sessions', 'lanes'],
   sessions: ['sessions'],
   figures: ['tonight'],
-  settings: ['gateways', 'machines', 'lanes', 'sessions'],
+  settings: ['gateways', 'machines', 'lanes', 'calls', 'sessions'],
 };
 
 /** The whole floor of one house, at its sequence number. */
@@ -50,7 +51,7 @@ export async function changes(
 async function laneContext(sources: FloorSources, centre: CentreRef, at: HouseAt, now: number): Promise<LaneContext> {
   const [sessions, pattern, gateways] = await Promise.all([sources.sessions(centre, at.state, now), sources.patterns(centre), sources.gateways(centre, now)]);
   return {
-    now, house: at.state, sessions, pattern,
+    now, house: at.state, sessions, pattern, ageing: ageingBy(centre.rules),
     silent: new Set(gateways.filter((g) => g.silent).map((g) => g.id)),
   };
 }
@@ -58,7 +59,7 @@ async function laneContext(sources: FloorSources, centre: CentreRef, at: HouseAt
 async function partsOf(sources: FloorSources, centre: CentreRef, at: HouseAt, now: number, wanted: readonly (keyof Parts)[]): Promise<Partial<Parts>> {
   const makers: { [K in keyof Parts]: () => Promise<Parts[K]> | Parts[K] } = {
     business: () => businessDayAt(now, centre.zone, centre.cut),
-    calls: () => Object.values(at.state.calls.open).sort((a, b) => a.raisedAt - b.raisedAt).map((call) => sources.callView(call, at.state, now)),
+    calls: () => Object.values(at.state.calls.open).sort((a, b) => a.raisedAt - b.raisedAt).map((call) => sources.callView(call, at.state, now, centre.rules)),
     runs: () => sources.runBars(centre, at.state, now),
     machines: () => sources.machines(centre, at.state),
     sessions: () => sources.sessions(centre, at.state, now),

@@ -1,5 +1,6 @@
 import type { CallView, FloorSnapshot, RunBar, SessionBar } from '#shared/contracts/floor.ts';
 import type { Call } from '#shared/domain/calls/state.ts';
+import type { HouseRules } from '#shared/domain/house-rules.ts';
 import type { House } from '#shared/domain/house/state.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 
@@ -10,7 +11,7 @@ export interface PatternFacts {
 
 /** What the floor asks of the slices whose matters it shows; compose.ts joins their front doors to it. */
 export interface FloorSources {
-  callView(call: Call, house: House, now: number): CallView;
+  callView(call: Call, house: House, now: number, rules: HouseRules): CallView;
   runBars(centre: CentreRef, house: House, now: number): Promise<RunBar[]>;
   machines(centre: CentreRef, house: House): Promise<FloorSnapshot['machines']>;
   /** Length and standing of a revision; undefined when the centre knows no pattern of that name. */

@@ -43,7 +43,7 @@ export function readinessCommands({ ledger, leagues, records, now: clock, change
       return done(centre, ledger.decide(centre, async ({ state }, now, trx) => {
         if (session.status === 'cancelled' || !WATCHED_KINDS.includes(session.kind)) throw conflict('readiness.not-watched');
         if (isFrozen(session, now)) throw conflict('readiness.frozen', { warmUpAt: session.warmUpAt });
-        const readiness = sessionReadiness(session, surroundings(state, known, now));
+        const readiness = sessionReadiness(session, surroundings(centre, state, known, now));
         const holding = readiness.lanes.filter((lane) => lane.mark === 'holds').map((lane) => lane.lane);
         if (holding.length > 0) throw conflict('readiness.holds', { lanes: holding.join() });
         const standing = (await store.kept(trx, centre.id, [id])).confirmations.findLast((one) => one.reopened === null);
@@ -93,7 +93,7 @@ async function movePair({ leagues, records, now: clock }: CommandDeps, centre: C
   if (pairsOf([fromPair])[0] !== fromPair) throw invalid('readiness.pair-not-of-session', '/fromPair', { pair: fromPair });
   if (pairsOf([toPair])[0] !== toPair) throw invalid('league.lanes-outside-house', '/toPair', { from: toPair, to: toPair + 1, house: centre.lanes });
   await leagues.movePair(centre, id, fromPair, toPair, ({ state }, now, session, booked) => {
-    const around = surroundings(state, { ...known, sessions: booked }, now);
+    const around = surroundings(centre, state, { ...known, sessions: booked }, now);
     const lanes = [state.floor[toPair - 1], state.floor[toPair]];
     const broken = lanes.some((lane) => !lane || lane.outOfService !== null || lane.stop !== null);
     const occupied = lanes.some((lane) => lane?.use && lane.use.until === null && lane.use.games === null && !booked.some((other) => other.lanes.includes(lane.lane)));

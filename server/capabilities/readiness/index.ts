@@ -52,7 +52,7 @@ export function createReadiness({ db, ledger, clock, config }: Pick<Deps, 'db' |
     },
     async dressingWanted(centre, house, now) {
       const until = businessDayAt(now, centre.zone, centre.cut).to;
-      const around = surroundings(house, await records(centre, now, until), now);
+      const around = surroundings(centre, house, await records(centre, now, until), now);
       return { wants: dressingWanted(around, until), marginMs: around.settings.dressMarginMs };
     },
     forget: screen.forget,

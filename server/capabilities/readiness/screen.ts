@@ -49,7 +49,7 @@ export function readinessScreen({ ledger, leagues, records, kept }: ScreenDeps) 
         rows.catch(() => remembered.delete(centre.slug));
       }
       const { records: known, kept: of, from, to } = await rows;
-      const around = surroundings(house, known, now);
+      const around = surroundings(centre, house, known, now);
       return known.sessions.filter((session) => session.startAt >= from && session.startAt < to).map((session) => sessionBar(session, around, of, centre.zone));
     },
 
@@ -60,7 +60,7 @@ export function readinessScreen({ ledger, leagues, records, kept }: ScreenDeps) 
       const mine = (await leagues.sessionsOfDate(centre, day.date)).filter((session) => own === null || (session.leagueId !== null && own.includes(session.leagueId)));
       const known = await records(centre, now, Math.max(day.to, now) + 12 * 3_600_000);
       const of = await kept(centre, mine.map((session) => session.id));
-      const around = surroundings(state, known, now);
+      const around = surroundings(centre, state, known, now);
       return { date: day.date, at: now, sessions: mine.filter((session) => session.status === 'booked').map((session) => sessionSummary(session, around, of, centre.zone)) };
     },
 
@@ -69,7 +69,7 @@ export function readinessScreen({ ledger, leagues, records, kept }: ScreenDeps) 
       if (!session) throw notFound('booking.unknown');
       const { state } = await ledger.read(centre);
       const known = await records(centre, now, Math.max(session.endAt, now) + 1);
-      return sessionView(session, surroundings(state, known, now), await kept(centre, [id]), centre.zone);
+      return sessionView(session, surroundings(centre, state, known, now), await kept(centre, [id]), centre.zone);
     },
   };
 }

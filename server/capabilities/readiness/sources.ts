@@ -1,4 +1,4 @@
-import { DEFAULT_READINESS } from '#shared/domain/readiness/settings.ts';
+import { readinessBy } from '#shared/domain/house-rules.ts';
 import type { House } from '#shared/domain/house/state.ts';
 import type { Session } from '#shared/domain/leagues/session.ts';
 import { patternVolume } from '#shared/domain/runs/volume.ts';
@@ -48,7 +48,7 @@ function knownPatterns({ patterns, revisions }: Library): KnownPattern[] {
   }));
 }
 
-export const surroundings = (house: House, records: Records, now: number): Surroundings => ({
+export const surroundings = (centre: CentreRef, house: House, records: Records, now: number): Surroundings => ({
   now, floor: house.floor, calls: house.calls, runs: house.runs, lanes: records.lanes, sessions: records.sessions, patterns: records.patterns,
-  settings: { ...DEFAULT_READINESS, weights: records.weights },
+  settings: readinessBy(centre.rules, records.weights),
 });

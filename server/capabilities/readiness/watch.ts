@@ -36,12 +36,12 @@ export const isWatched = (session: Session, now: number): boolean =>
   WATCHED_KINDS.includes(session.kind) && session.status === 'booked' && session.warmUpAt <= now + AHEAD_MS && session.warmUpAt > now - BEHIND_MS;
 
 /** Null: nothing changed since the last look. */
-function stepOf(session: Session, house: House, records: Records, kept: KeptOfSessions, now: number): Step | null {
+function stepOf(centre: CentreRef, session: Session, house: House, records: Records, kept: KeptOfSessions, now: number): Step | null {
   const before = kept.verdicts.get(session.id);
   if (isFrozen(session, now)) {
     return before && before.frozenAt === null ? { session, readiness: null, verdict: { ...before, frozenAt: session.warmUpAt }, mail: null, confirmation: null } : null;
   }
-  const readiness = sessionReadiness(session, surroundings(house, records, now));
+  const readiness = sessionReadiness(session, surroundings(centre, house, records, now));
   const standing = kept.confirmations.findLast((one) => one.session === session.id && one.reopened === null);
   const judged = standing ? judge(standing.shown, session, readiness, standing.worse, now) : null;
   const told = before?.told ?? { held60At: null, held30At: null, readyAt: null };
@@ -89,11 +89,11 @@ export function watcher(deps: WatchDeps) {
     const ids = watched.map((session) => session.id);
     const first = await deps.ledger.read(centre);
     const kept = await deps.kept(centre, ids);
-    if (!watched.some((session) => stepOf(session, first.state, records, kept, now) !== null)) return 0;
+    if (!watched.some((session) => stepOf(centre, session, first.state, records, kept, now) !== null)) return 0;
     const told = new Map(await Promise.all(watched.map(async (session) => [session.id, options.mail ? await deps.recipients(centre, session.leagueId) : []] as const)));
     const written = await deps.ledger.decide(centre, async ({ state }, _now, trx) => {
       const locked = await store.kept(trx, centre.id, ids);
-      const steps = watched.flatMap((session) => stepOf(session, state, records, locked, now) ?? []);
+      const steps = watched.flatMap((session) => stepOf(centre, session, state, records, locked, now) ?? []);
       const facts: NewFact[] = steps.flatMap(({ session, confirmation }) =>
         confirmation && !confirmation.judged.stands ? [{ type: 'session.reopened' as const, data: { session: session.id, because: confirmation.judged.because.code }, by: WATCH }] : []);
       return { facts, topics: steps.length > 0 ? ['sessions' as const] : [], result: () => steps.length, write: async (own) => {

@@ -1,4 +1,5 @@
 import type { BodyOf, Contract, ParamsOf, QueryOf, ResponseOf } from '#shared/contracts/contract.ts';
+import type { HouseRules } from '#shared/domain/house-rules.ts';
 import type { Actor } from '#shared/policy/policy.ts';
 
 /** A centre as every request in its path sees it. */
@@ -10,6 +11,7 @@ export interface CentreRef {
   /** Minutes after local midnight at which a business day begins. */
   cut: number;
   lanes: number;
+  rules: HouseRules;
 }
 
 /** What sign-in and the wall's link need of HTTP itself; no other handler does. */

@@ -8,6 +8,7 @@ import { Displays } from './components/displays.tsx';
 import { Gateways } from './components/gateways.tsx';
 import { LanesTable } from './components/lanes-table.tsx';
 import { People } from './components/people.tsx';
+import { RulesForm } from './components/rules-form.tsx';
 import { SetAside } from './components/set-aside.tsx';
 import { settingsQuery } from './queries.ts';
 
@@ -24,6 +25,7 @@ export function SettingsPage() {
         <div className="grid items-start gap-x-14 gap-y-10 min-[1200px]:grid-cols-2">
           <div className="flex min-w-0 flex-col gap-10">
             <CentreForm key={JSON.stringify(settings.data.centre)} settings={settings.data.centre} edits={edits} />
+            <RulesForm key={JSON.stringify(settings.data.rules)} rules={settings.data.rules} edits={edits} />
             <Gateways gateways={settings.data.gateways} edits={edits} />
             <SetAside edits={edits} />
             {may('people.manage') ? <Displays /> : null}

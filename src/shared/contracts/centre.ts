@@ -35,6 +35,12 @@ export const gatewaySettings = z.object({
 });
 export type GatewaySettings = z.infer<typeof gatewaySettings>;
 
+const upTo = (low: number, high: number) => z.int().check(z.minimum(low), z.maximum(high));
+export const houseRules = z.object({
+  otherMechanicMin: upTo(1, 60), deskMin: upTo(1, 120), managerMin: upTo(1, 240), dressMarginMin: upTo(0, 120), planLeadMin: upTo(10, 720), lowBatteryPct: upTo(0, 90),
+  freshDeliveries: upTo(0, 2_000), freshHours: upTo(1, 72), wornDeliveries: upTo(1, 5_000), wornHours: upTo(1, 240), freshTolerance: upTo(0, 100),
+});
+
 const at = '/api/centres/:centre/settings';
 const newKey = z.object({ gateway: gatewaySettings, key: z.string() });
 const gatewayParams = z.extend(centreParams, { gateway: uuid });
@@ -42,11 +48,15 @@ const gatewayParams = z.extend(centreParams, { gateway: uuid });
 export const centreContracts = {
   settings: contract({
     id: 'centre.settings', method: 'GET', path: at, permission: 'settings.see', summary: 'The centre, its lanes and gateways as they are set', params: centreParams,
-    response: z.object({ centre: z.extend(centreSettings, { slug: z.string(), lanes: z.int() }), lanes: z.array(laneSettings), gateways: z.array(gatewaySettings) }),
+    response: z.object({ centre: z.extend(centreSettings, { slug: z.string(), lanes: z.int() }), lanes: z.array(laneSettings), gateways: z.array(gatewaySettings), rules: houseRules }),
   }),
   save: contract({
     id: 'centre.save', method: 'PUT', path: at, permission: 'settings.edit', summary: 'Change name, zone, business-day cut and opening hours', params: centreParams,
     body: centreSettings, response: ok,
+  }),
+  saveRules: contract({
+    id: 'centre.saveRules', method: 'PUT', path: `${at}/rules`, permission: 'settings.edit', summary: 'When others are asked, when lanes are to be dressed, what counts as fresh and worn',
+    params: centreParams, body: houseRules, response: houseRules, refusals: ['rules.contradict'],
   }),
   lane: contract({
     id: 'centre.lane', method: 'PATCH', path: `${at}/lanes/:lane`, permission: 'settings.edit', summary: 'Change what is known of one lane',

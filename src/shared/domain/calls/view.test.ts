@@ -62,7 +62,7 @@ describe('escalation', () => {
 describe('view of a call', () => {
   it('says who waits, who comes and what joined', () => {
     const { house, call } = night(['lane.opened', { lane: 9, use: 'league', label: 'Thursday Scratch' }], stop, stop, ['call.acknowledged', { call: '' }, odell]);
-    expect(callFacts(call, house, T0 + 5 * MINUTE)).toMatchObject({
+    expect(callFacts(call, house, T0 + 5 * MINUTE, DEFAULT_ESCALATION)).toMatchObject({
       lane: 9, status: 'acknowledged', joined: 1, code: 'E12', raisedAt: T0 + MINUTE, mechanic: { id: 'u1', name: 'Odell' },
       acknowledgedAt: T0 + 3 * MINUTE, mechanicIn: null, playing: { kind: 'league', label: 'Thursday Scratch' },
     });
@@ -74,9 +74,9 @@ describe('view of a call', () => {
     expect(recordedInside(half.call)).toBeNull();
     expect(lockoutOpen(half.call)).toBe(true);
     const inside = night(stop, ['lockout.begun', { call: '' }, odell], ...steps, ['lane.counted', { lane: 9, cycles: 1 }]);
-    expect(callFacts(inside.call, inside.house, T0)).toMatchObject({ mechanicIn: { by: 'Odell', since: T0 + (steps.length + 1) * MINUTE }, alarmAt: T0 + (steps.length + 2) * MINUTE });
+    expect(callFacts(inside.call, inside.house, T0, DEFAULT_ESCALATION)).toMatchObject({ mechanicIn: { by: 'Odell', since: T0 + (steps.length + 1) * MINUTE }, alarmAt: T0 + (steps.length + 2) * MINUTE });
     const out = night(stop, ['lockout.begun', { call: '' }, odell], ...steps, ['lane.counted', { lane: 9, cycles: 1 }], ['lockout.released', { call: '' }, odell]);
-    expect(callFacts(out.call, out.house, T0)).toMatchObject({ mechanicIn: null, alarmAt: null });
+    expect(callFacts(out.call, out.house, T0, DEFAULT_ESCALATION)).toMatchObject({ mechanicIn: null, alarmAt: null });
     expect(lockoutOpen(out.call)).toBe(false);
   });
 });

@@ -1,6 +1,6 @@
 import type { Equipment, LaneUseKind, SafetyKind, Scope } from '../equipment.ts';
 import type { House } from '../house/state.ts';
-import { DEFAULT_ESCALATION, type Escalation, escalationOf, type EscalationRules, statusAt } from './escalation.ts';
+import { type Escalation, escalationOf, type EscalationRules, statusAt } from './escalation.ts';
 import type { Call, CallStatus } from './state.ts';
 
 /** A call as screens show it, but for the words of what is played on its lane: those are the text's. */
@@ -32,7 +32,7 @@ export interface CallFacts {
 }
 
 /** One call of a house at `now` (epoch ms). */
-export function callFacts(call: Call, house: House, now: number, rules: EscalationRules = DEFAULT_ESCALATION): CallFacts {
+export function callFacts(call: Call, house: House, now: number, rules: EscalationRules): CallFacts {
   const status = statusAt(call, now);
   const who = call.onLane?.by ?? call.acknowledged?.by ?? null;
   const inside = recordedInside(call);

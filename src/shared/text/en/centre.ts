@@ -24,6 +24,11 @@ export const settingsText = {
 
 export const refusals: Sentences = {
   'lane.unknown': ({ lane }) => `There is no lane ${String(lane ?? '')} here.`,
+  'rules.contradict': () => 'These rules contradict each other.',
+  'rules.desk-before-mechanic': () => 'The desk isn’t asked before the other mechanic.',
+  'rules.manager-before-desk': () => 'The manager isn’t asked before the desk.',
+  'rules.lead-within-margin': () => 'Lanes are planned earlier than they are to be dressed.',
+  'rules.worn-within-fresh': () => 'Worn begins above what still counts as fresh.',
   'date.invalid': () => 'This isn’t a date of the calendar.',
   'gateway.unknown': () => 'There is no such gateway here.',
   'gateway.name-taken': ({ name }) => `There is a gateway called ${String(name)} already.`,
