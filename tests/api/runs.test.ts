@@ -1,14 +1,10 @@
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
-import type { FloorSnapshot } from '#shared/contracts/floor.ts';
 import type { RunDetail } from '#shared/contracts/runs.ts';
 import { signedIn } from '#tests/support/actors.ts';
-import { type Answer, ask } from '#tests/support/ask.ts';
-import { countRows } from '#tests/support/builders.ts';
 import { fixedClock } from '#tests/support/clock.ts';
 import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import type { EventGiven } from '#tests/support/device.ts';
-import { floorHouse } from '#tests/support/floor-house.ts';
 import { good, refused } from '#tests/support/league-house.ts';
+import { runEvents, runsHouse } from '#tests/support/runs-house.ts';
 import { startServer, type TestServer } from '#tests/support/server.ts';
 
 const START = '2026-05-14T18:00:00Z';
@@ -27,29 +23,8 @@ afterAll(async () => {
   await database.close();
 });
 
-type Somebody = { cookie: string };
-
-async function house() {
-  const given = await floorHouse(server, 12);
-  const go = (who: Somebody, method: string, path: string, body?: unknown): Promise<Answer> => ask(server.url, method, `/api/centres/${given.centre.slug}${path}`, { cookie: who.cookie, body });
-  const runs = async (date?: string) => (good(await go(given.desk, 'GET', date ? `/runs?date=${date}` : '/runs')).body as { date: string; runs: RunDetail[] }).runs;
-  const floor = async () => good(await go(given.desk, 'GET', '/floor')).body as FloorSnapshot;
-  const laneOf = async (lane: number) => (await floor()).lanes.find((one) => one.lane === lane);
-  const plan = (change: object = {}) => go(given.mechanic, 'POST', '/runs/planned', { machine: 'm1', pattern: 'house', lanes: [1, 2, 3, 4], startAt: at(30), ...change });
-  const record = (change: object = {}) => go(given.mechanic, 'POST', '/runs', { machine: 'm1', pattern: 'house', startedAt: at(-40), finishedAt: at(-20), lanes: [{ lane: 1, outcome: 'dressed' }, { lane: 2, outcome: 'dressed' }], ...change });
-  const cancel = (run: string, who: Somebody = given.mechanic) => go(who, 'POST', `/runs/m1/${run}/cancel`, { reason: 'League called off' });
-  const send = async (...events: EventGiven[]) => {
-    const { body } = await given.gateway.send(events);
-    expect(body).toMatchObject({ accepted: events.length, setAside: [] });
-  };
-  const written = async () => Promise.all(['journal', 'run', 'run_lane'].map((table) => countRows(database.db, table, given.centre)));
-  return { ...given, go, runs, floor, laneOf, plan, record, cancel, send, written };
-}
-
-const started = (run: string, lanes: number[], minutes: number, more: object = {}): EventGiven => ({ type: 'run.started', data: { machine: 'm1', run, pattern: 'house', revision: 1, lanes, ...more }, time: at(minutes) });
-const dressed = (run: string, lane: number, minutes: number, more: object = {}): EventGiven => (
-  { type: 'run.lane.dressed', data: { machine: 'm1', run, lane, startedAt: new Date(at(minutes - 2)).toISOString(), finishedAt: new Date(at(minutes)).toISOString(), ...more }, time: at(minutes) });
-const skipped = (run: string, lane: number, minutes: number): EventGiven => ({ type: 'run.lane.skipped', data: { machine: 'm1', run, lane, reason: 'occupied' }, time: at(minutes) });
+const house = () => runsHouse(server, at);
+const { started, dressed, skipped } = runEvents(at);
 
 describe('a run that a machine tells', () => {
   const NIGHT = [
@@ -104,36 +79,6 @@ describe('a run that a machine tells', () => {
     const { send, runs } = await house();
     await send(started('118', [1, 2], -20), dressed('118', 1, -18), started('119', [3], -5));
     expect((await runs()).map((run) => [run.run, run.status, run.endAt, run.reason])).toEqual([['118', 'finished', at(-18), 'not-closed'], ['119', 'under-way', at(-3), null]]);
-  });
-});
-
-describe('a machine that counts its runs from one every day', () => {
-  it('writes over no run of the day before, whichever arrives first', async () => {
-    const { send, runs, go, manager, written } = await house();
-    const day = -24 * 60;
-    const first = [started('1', [1, 2], day - 20), dressed('1', 1, day - 18), dressed('1', 2, day - 16), { type: 'run.finished', data: { machine: 'm1', run: '1' }, time: at(day - 15) }];
-    const second = [started('1', [3], -20), dressed('1', 3, -18)];
-    await send(...first);
-    const before = await runs('2026-05-13');
-    expect(before).toMatchObject([{ run: '1', status: 'finished', lanes: [1, 2], done: 2 }]);
-    await send(...second);
-    expect(await runs('2026-05-13')).toEqual(before);
-    expect(await runs()).toMatchObject([{ run: '1', status: 'under-way', lanes: [3], done: 1 }]);
-    expect((await written()).slice(1)).toEqual([2, 3]);
-    const figures = good(await go(manager, 'GET', '/nights/2026-05-13')).body as { figures: { dressed: { lanes: number } } };
-    expect(figures.figures.dressed.lanes).toBe(2);
-
-    const other = await house();
-    await other.send(...second);
-    await other.send(...first);
-    const view = async (of: typeof other) => [await of.runs('2026-05-13'), await of.runs()];
-    expect(await view(other)).toEqual([before, await runs()]);
-  });
-
-  it('one that stands twice in a night is listed twice', async () => {
-    const { send, runs } = await house();
-    await send(started('1', [1], -40), dressed('1', 1, -38), { type: 'run.finished', data: { machine: 'm1', run: '1' }, time: at(-37) }, started('1', [1], -10), dressed('1', 1, -8));
-    expect((await runs()).map(({ key, status, done }) => [key, status, done])).toEqual([[`m1/1/${at(-40)}`, 'finished', 1], [`m1/1/${at(-10)}`, 'under-way', 1]]);
   });
 });
 
