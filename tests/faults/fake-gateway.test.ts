@@ -8,10 +8,11 @@ import { businessDayAt } from '#shared/domain/business-day.ts';
 import { systemClock } from '#server/platform/clock.ts';
 import { aCentre } from '#tests/support/builders.ts';
 import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
+import { eveningZone } from '#tests/support/league-evening.ts';
 import { startServer, type TestServer } from '#tests/support/server.ts';
 import { HOUSE, SOURCES } from '../../server/fakes/gateway/invented-house.ts';
 import type { DemoPlan } from '../../server/fakes/gateway/plan-file.ts';
-import { replay } from '../../server/fakes/gateway/player.ts';
+import { live, nightAt, replay } from '../../server/fakes/gateway/player.ts';
 import { sendAll } from '../../server/fakes/gateway/sender.ts';
 import { openSpool } from '../../server/fakes/gateway/spool.ts';
 
@@ -33,12 +34,12 @@ afterAll(async () => {
 });
 
 /** A house for the gateways, with a key each. */
-async function plan(): Promise<{ plan: DemoPlan; centreId: Buffer }> {
-  const centre = await aCentre(server.slices.centre, { lanes: HOUSE.lanes, zone: 'UTC', family: 'free-fall' });
+async function plan(zone = 'UTC', first: Pick<DemoPlan, 'firstDate' | 'anchorAt'> = { firstDate: '2020-01-01', anchorAt: 0 }): Promise<{ plan: DemoPlan; centreId: Buffer }> {
+  const centre = await aCentre(server.slices.centre, { lanes: HOUSE.lanes, zone, family: 'free-fall' });
   const { key } = await server.slices.centre.addGateway(centre, 'Back room');
   const { key: second } = await server.slices.centre.addGateway(centre, 'Lane machines');
   const gateways = [{ source: SOURCES.backRoom, key, skewMs: 0 }, { source: SOURCES.laneCare, key: second, skewMs: 0 }];
-  return { plan: { centre: centre.slug, zone: 'UTC', seed: 1, firstDate: '2020-01-01', anchorAt: 0, gateways }, centreId: centre.id };
+  return { plan: { centre: centre.slug, zone, seed: 1, ...first, gateways }, centreId: centre.id };
 }
 
 const told = async (centreId: Buffer): Promise<string[]> =>
@@ -58,6 +59,16 @@ describe('the fake gateway', () => {
     expect(nights[2]).not.toEqual(nights[0]);
     const [{ late }] = (await database.db('journal').where({ centre_id: a.centreId }).where('time_at', '>', new Date()).count({ late: '*' })) as [{ late: number }];
     expect(late).toBe(0);
+  });
+
+  it('tells nothing again of what was told when its house was made', async () => {
+    const [now, zone] = [Date.now(), eveningZone(Date.now())];
+    const { plan: one, centreId } = await plan(zone, { firstDate: businessDayAt(now, zone).date, anchorAt: now });
+    expect(nightAt(one, now).events.filter((event) => event.time <= now).length).toBeGreaterThan(100);
+    await live({ plan: one, url: server.url, dataDir: join(dataDir, 'first'), stop: AbortSignal.timeout(1_500) });
+    const times = (await database.db('journal').where({ centre_id: centreId }).pluck('time_at')) as Date[];
+    expect(times.length).toBeGreaterThan(0);
+    expect(Math.min(...times.map(Number))).toBeGreaterThanOrEqual(now);
   });
 
   it('keeps on disk what nobody has acknowledged, also across its own end, and sends it once when somebody listens', async () => {

@@ -40,7 +40,8 @@ export async function live(tonight: Tonight): Promise<void> {
 async function liveOf({ plan, url, dataDir, stop }: Tonight, gateway: DemoPlan['gateways'][number]): Promise<void> {
   const line: Line = { url, key: gateway.key, skewMs: gateway.skewMs };
   let night = nightAt(plan, Date.now());
-  const spool = openSpool(join(dataDir, 'gateway', `${gateway.source.split(':').at(-1)}.json`), night.from);
+  // What happened before the first start has been told when the house was made.
+  const spool = openSpool(join(dataDir, 'gateway', `${gateway.source.split(':').at(-1)}.json`), Math.max(night.from, plan.anchorAt));
   const boot = Date.now();
   let heartbeat = 0;
   spool.take([own(gateway.source, boot, 'gateway.started', { queued: spool.size, uptimeS: 0 })], spool.until);
