@@ -66,7 +66,7 @@ describe('rules of a house', () => {
     const { save, device, centre } = await house();
     good(await save({ otherMechanicMin: 5 }));
     await device('pinsetter.stopped', { lane: 3 });
-    const letters = async () => (await database.db('mail_outbox').where({ centre_id: centre.id }).pluck('text_body')) as string[];
+    const letters = async () => database.db('mail_outbox').where({ centre_id: centre.id }).pluck<string[]>('text_body');
     clock.advance(5 * MIN - 1);
     await server.slices.calls.mailUnanswered(clock.now());
     expect(await letters()).toEqual([]);

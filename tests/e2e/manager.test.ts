@@ -57,7 +57,7 @@ describe('the manager, the morning after', () => {
     await page.getByText('The figures are as they were issued.').waitFor();
     const nine = businessDay(date, house.centre.zone, 0).from + 20 * HOUR;
     await house.gateway.sendOne({ type: 'lane.counted', data: { lane: 1, deliveries: 20, frames: 11, basis: 'scored' }, time: nine });
-    await page.getByText('Frames: issued 960, now 971').waitFor(SOON);
+    await page.getByText('Frames: issued 960, now 971').first().waitFor(SOON);
     expect(await figure(page, 'Frames')).toBe('971');
     expect((await night()).report?.figures.total.frames).toBe(960);
   });

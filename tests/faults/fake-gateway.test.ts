@@ -66,7 +66,7 @@ describe('the fake gateway', () => {
     const { plan: one, centreId } = await plan(zone, { firstDate: businessDayAt(now, zone).date, anchorAt: now });
     expect(nightAt(one, now).events.filter((event) => event.time <= now).length).toBeGreaterThan(100);
     await live({ plan: one, url: server.url, dataDir: join(dataDir, 'first'), stop: AbortSignal.timeout(1_500) });
-    const times = (await database.db('journal').where({ centre_id: centreId }).pluck('time_at')) as Date[];
+    const times = await database.db('journal').where({ centre_id: centreId }).pluck<Date[]>('time_at');
     expect(times.length).toBeGreaterThan(0);
     expect(Math.min(...times.map(Number))).toBeGreaterThanOrEqual(now);
   });

@@ -9,7 +9,7 @@ const PATIENCE_MS = 1_200;
 const PING_MS = 600;
 /** … in slices: an answer that lay waiting while this process was busy is read before the next one ends … */
 const SLICES = 6;
-/** … and a slice that ended so late doesn't count, as this process was busy, not the database; a busy process decides at last. */
+/** … and a slice that ended so late begins the count anew, as this process was busy, not the database; a busy process decides at last. */
 const LATE_MS = 30;
 const MOST_SLICES = 40;
 const LAX_MS = 10_000;
@@ -63,7 +63,7 @@ async function askOnce(beside: Knex): Promise<boolean> {
   for (let [slice, punctual] = [0, 0]; punctual < SLICES && slice < MOST_SLICES && answer === null; slice += 1) {
     const from = performance.now();
     await pause(PING_MS / SLICES, undefined, { ref: false });
-    if (performance.now() - from < PING_MS / SLICES + LATE_MS) punctual += 1;
+    punctual = performance.now() - from < PING_MS / SLICES + LATE_MS ? punctual + 1 : 0;
   }
   return answer === true;
 }

@@ -8,7 +8,6 @@ import { Refused } from '../../../ui/banner.tsx';
 import { Button } from '../../../ui/button.tsx';
 import { Field, Input } from '../../../ui/field.tsx';
 import { PartTitle } from '../../../ui/page.tsx';
-import { showToast } from '../../../ui/toast.tsx';
 import { wallTime } from '#shared/text/en/formats.ts';
 import { minutesOf } from '../../../lib/wall-clock.ts';
 import { useChange } from '../mutations.ts';
@@ -33,8 +32,8 @@ const settingsOf = ({ name, zone, cut, days }: Draft): CentreSettings => ({
 export function CentreForm({ settings, edits }: { settings: CentreSettings; edits: boolean }) {
   const { slug } = useCentre();
   const { register, handleSubmit, watch, formState } = useForm<Draft>({ defaultValues: draftOf(settings) });
-  const save = useChange(slug, (body: CentreSettings) => call(centreContracts.save, { params: { centre: slug }, body }));
-  const submit = handleSubmit((draft) => save.mutate(settingsOf(draft), { onSuccess: () => showToast(settingsWords.saved) }));
+  const save = useChange(slug, (body: CentreSettings) => call(centreContracts.save, { params: { centre: slug }, body }), settingsWords.saved);
+  const submit = handleSubmit((draft) => save.mutate(settingsOf(draft)));
   const zoneError = fieldSentenceOf(save.error, 'zone') ? settingsWords.zoneUnknown : null;
   const known = ['name', 'zone', 'cut'].some((name) => fieldSentenceOf(save.error, name));
   return (

@@ -9,7 +9,6 @@ import { Refused } from '../../../ui/banner.tsx';
 import { Button } from '../../../ui/button.tsx';
 import { Field, Input } from '../../../ui/field.tsx';
 import { PartTitle } from '../../../ui/page.tsx';
-import { showToast } from '../../../ui/toast.tsx';
 import { useChange } from '../mutations.ts';
 
 const GROUPS: readonly (readonly [keyof typeof rulesWords.groups, readonly (keyof HouseRules)[]])[] = [
@@ -22,8 +21,8 @@ const GROUPS: readonly (readonly [keyof typeof rulesWords.groups, readonly (keyo
 export function RulesForm({ rules, edits }: { rules: HouseRules; edits: boolean }) {
   const { slug } = useCentre();
   const { register, handleSubmit, reset, formState } = useForm<HouseRules>({ defaultValues: rules });
-  const save = useChange(slug, (body: HouseRules) => call(centreContracts.saveRules, { params: { centre: slug }, body }));
-  const submit = handleSubmit((draft) => save.mutate(draft, { onSuccess: () => showToast(rulesWords.saved) }));
+  const save = useChange(slug, (body: HouseRules) => call(centreContracts.saveRules, { params: { centre: slug }, body }), rulesWords.saved);
+  const submit = handleSubmit((draft) => save.mutate(draft));
   const known = GROUPS.some(([, names]) => names.some((name) => fieldSentenceOf(save.error, name)));
   const unusual = GROUPS.some(([, names]) => names.some((name) => rules[name] !== USUAL_RULES[name]));
   return (
