@@ -15,6 +15,10 @@ it('the manager sets the rules of the house: what contradicts stands beside its 
   await worn.fill('80');
   await page.getByRole('button', { name: 'Save the rules' }).click();
   await page.getByText('Worn begins above what still counts as fresh.').waitFor();
+  await page.getByLabel('Battery is low below, %').fill('');
+  await page.getByRole('button', { name: 'Save the rules' }).click();
+  await page.getByText('This takes a whole number.').waitFor();
+  await page.getByLabel('Battery is low below, %').fill('20');
   await fresh.fill('many');
   await page.getByRole('button', { name: 'Save the rules' }).click();
   await page.getByText('This takes a whole number.').waitFor();

@@ -6,6 +6,7 @@ import type { Sessions } from '#server/platform/auth/sessions.ts';
 import { invalid, notFound, Refusal } from '#server/platform/http/refusal.ts';
 import type { HttpSide } from '#server/platform/http/route.ts';
 import type { Logger } from '#server/platform/log.ts';
+import { browserOf } from './browser.ts';
 import { sessionHandle } from './identify.ts';
 import type { accountReadModel } from './read-model.ts';
 import type { accountStore } from './store.ts';
@@ -66,7 +67,7 @@ export function signInCommands({ sessions, store, readModel, limit, revoked, log
     async sessions(user: SignedIn, http: HttpSide): Promise<OwnSession[]> {
       const current = await sessions.read(http.cookies);
       return (await sessions.list(user.id)).map((s) => ({
-        id: s.publicId, createdAt: s.createdAt, seenAt: s.seenAt, until: Math.min(s.idleUntil, s.endsAt), program: s.agent, address: s.address, current: s.publicId === current?.publicId,
+        id: s.publicId, createdAt: s.createdAt, seenAt: s.seenAt, until: Math.min(s.idleUntil, s.endsAt), program: s.agent, ...browserOf(s.agent), address: s.address, current: s.publicId === current?.publicId,
       }));
     },
 

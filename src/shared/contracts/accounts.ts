@@ -23,7 +23,7 @@ export const identity = z.object({
 export type Identity = z.infer<typeof identity>;
 
 export const ownSession = z.object({
-  id: uuid, createdAt: instant, seenAt: instant, /** When it ends if nothing is heard of it. */ until: instant, program: z.string(), address: z.string(), current: z.boolean(),
+  id: uuid, createdAt: instant, seenAt: instant, /** When it ends if nothing is heard of it. */ until: instant, /** As it names itself. */ program: z.string(), browser: z.nullable(z.string()), system: z.nullable(z.string()), address: z.string(), current: z.boolean(),
 });
 export type OwnSession = z.infer<typeof ownSession>;
 

@@ -14,14 +14,14 @@ export function SignIns() {
   const { data, error } = useQuery(ownSessionsQuery);
   const end = useEndSession();
   return (
-    <section>
+    <section className="min-w-0">
       <PartTitle>{text.signIns}</PartTitle>
       {data ? (
         <ul className="border-b border-rule">
           {data.sessions.map((one) => (
             <li key={one.id} className="flex items-start justify-between gap-4 border-t border-rule py-3">
               <div className="min-w-0">
-                <strong className="font-[650] break-words">{one.program}</strong>
+                <strong className="font-[650] wrap-anywhere">{text.browser(one)}</strong>
                 <p className="text-dim">{[one.address, text.since(dayAndTime(one.createdAt)), text.seen(dayAndTime(one.seenAt))].join(' · ')}</p>
               </div>
               {one.current ? <span className="type-label shrink-0 pt-1">{text.here}</span> : <Button onClick={() => end.mutate(one.id)} busy={end.isPending && end.variables === one.id}>{text.end}</Button>}

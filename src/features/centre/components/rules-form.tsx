@@ -17,6 +17,9 @@ const GROUPS: readonly (readonly [keyof typeof rulesWords.groups, readonly (keyo
   ['film', ['freshDeliveries', 'freshHours', 'freshTolerance', 'wornDeliveries', 'wornHours']],
 ];
 
+/** An empty field is no nought. */
+const numberOf = (value: string | number): number => (String(value).trim() === '' ? NaN : Number(value));
+
 /** What the house decides for itself: whole numbers with their units, each beside what is usual. */
 export function RulesForm({ rules, edits }: { rules: HouseRules; edits: boolean }) {
   const { slug } = useCentre();
@@ -34,10 +37,10 @@ export function RulesForm({ rules, edits }: { rules: HouseRules; edits: boolean 
             <fieldset key={group}>
               <legend className="text-sm font-[620]">{rulesWords.groups[group].name}</legend>
               <p className="type-label mb-2">{rulesWords.groups[group].lead}</p>
-              <div className="grid gap-x-4 gap-y-3 min-[560px]:grid-cols-2 min-[900px]:grid-cols-3">
+              <div className="grid grid-cols-2 items-end gap-x-4 gap-y-3 min-[900px]:grid-cols-3">
                 {names.map((name) => (
                   <Field key={name} label={rulesWords.fields[name]} hint={rulesWords.usual(USUAL_RULES[name])} error={formState.errors[name] ? rulesWords.noNumber : fieldSentenceOf(save.error, name)}>
-                    {(c) => <Input {...c} inputMode="numeric" maxLength={4} {...register(name, { setValueAs: Number, validate: (value) => Number.isInteger(value) && value >= 0 })} />}
+                    {(c) => <Input {...c} inputMode="numeric" maxLength={4} {...register(name, { setValueAs: numberOf, validate: (value) => Number.isInteger(value) && value >= 0 })} />}
                   </Field>
                 ))}
               </div>

@@ -13,7 +13,10 @@ export const signInText = {
 
 export const accountText = {
   title: 'Your account', loading: 'Fetching where you are signed in', password: 'Password', present: 'Present password', next: 'New password', nextHint: 'Twelve characters or more; several words are easiest to remember.',
-  endsOthers: 'Changing it ends all other sign-ins.', change: 'Change password', changed: 'The password is changed; all other sign-ins have ended.', signIns: 'Where you are signed in', here: 'this browser', end: 'Sign out there',
+  endsOthers: 'Changing it ends all other sign-ins.', change: 'Change password', changed: 'The password is changed; all other sign-ins have ended.', signIns: 'Where you are signed in', here: 'this browser',
+  /** `Chrome on Linux`; what is no browser by its own name. */
+  browser: ({ browser, system, program }: { browser: string | null; system: string | null; program: string }) => (browser ? `${browser}${system ? ` on ${system}` : ''}` : program || 'A program without a name'),
+  end: 'Sign out there',
   since: (when: string) => `since ${when}`, seen: (when: string) => `last used ${when}`,
 } as const;
 
