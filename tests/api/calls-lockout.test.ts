@@ -1,29 +1,18 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import type { CallDetail } from '#shared/contracts/calls.ts';
 import { ISOLATION_STEPS, RELEASE_STEPS } from '#shared/domain/calls/lockout-steps.ts';
 import type { Answer } from '#tests/support/ask.ts';
-import { callsHouse, type CallsHouse, refusal, seen } from '#tests/support/calls-house.ts';
+import { callsHouse, refusal, seen } from '#tests/support/calls-house.ts';
 import { fixedClock } from '#tests/support/clock.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { served } from '#tests/support/served.ts';
 
 const SECOND = 1000;
 const clock = fixedClock('2026-05-14T17:39:00Z');
-let database: TestDatabase;
-let server: TestServer;
-let h: CallsHouse;
 let call: CallDetail;
 let lane = -1;
 
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock });
-  h = await callsHouse(server, { lanes: 40 });
-});
-afterAll(async () => {
-  await server.close();
-  await database.close();
-});
+const { server } = await served({ clock });
+const h = await callsHouse(server, { lanes: 40 });
 beforeEach(async () => {
   lane += 2;
   clock.advance(60 * SECOND);

@@ -1,25 +1,14 @@
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import type { CallDetail } from '#shared/contracts/calls.ts';
-import { callsHouse, type CallsHouse, refusal, seen } from '#tests/support/calls-house.ts';
+import { callsHouse, refusal, seen } from '#tests/support/calls-house.ts';
 import { fixedClock } from '#tests/support/clock.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { served } from '#tests/support/served.ts';
 
 const MINUTE = 60_000;
 const clock = fixedClock('2026-05-14T17:39:00Z');
-let database: TestDatabase;
-let server: TestServer;
-let h: CallsHouse;
 
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock });
-  h = await callsHouse(server, { lanes: 80 });
-});
-afterAll(async () => {
-  await server.close();
-  await database.close();
-});
+const { server, database } = await served({ clock });
+let h = await callsHouse(server, { lanes: 80 });
 beforeEach(() => {
   clock.advance(MINUTE);
 });

@@ -1,27 +1,17 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import type { FloorSnapshot } from '#shared/contracts/floor.ts';
 import { type HouseRules, USUAL_RULES } from '#shared/domain/house-rules.ts';
 import { ask } from '#tests/support/ask.ts';
 import { fixedClock } from '#tests/support/clock.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
 import { floorHouse } from '#tests/support/floor-house.ts';
 import { good, refused } from '#tests/support/league-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { served } from '#tests/support/served.ts';
 
 const START = '2026-05-14T18:00:00Z';
 const MIN = 60_000;
 const clock = fixedClock(START);
-let database: TestDatabase;
-let server: TestServer;
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock });
-});
+const { server, database } = await served({ clock });
 beforeEach(() => void clock.set(START));
-afterAll(async () => {
-  await server.close();
-  await database.close();
-});
 
 async function house() {
   const given = await floorHouse(server, 8);

@@ -1,34 +1,26 @@
 import fc from 'fast-check';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import { signedIn } from '#tests/support/actors.ts';
 import { ask } from '#tests/support/ask.ts';
 import { aCentre, countRows } from '#tests/support/builders.ts';
 import { fixedClock } from '#tests/support/clock.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
 import { aDevice, deviceAt, type Device, type EventGiven } from '#tests/support/device.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { served } from '#tests/support/served.ts';
+import { startServer } from '#tests/support/server.ts';
 
 const MIN = 60_000;
 const HOUR = 60 * MIN;
 const DAY = 24 * HOUR;
 
+const clock = fixedClock('2026-05-14T18:00:00Z');
+const { server, database } = await served({ clock });
+
 describe('POST /api/ingest/events', () => {
-  const clock = fixedClock('2026-05-14T18:00:00Z');
   const iso = (at: number) => new Date(at).toISOString();
-  let database: TestDatabase;
-  let server: TestServer;
   let centre: CentreRef;
   let device: Device;
 
-  beforeAll(async () => {
-    database = await freshDatabase();
-    server = await startServer({ db: database.db, clock });
-  });
-  afterAll(async () => {
-    await server.close();
-    await database.close();
-  });
   beforeEach(async () => {
     clock.set('2026-05-14T18:00:00Z');
     centre = await aCentre(server.slices.centre);

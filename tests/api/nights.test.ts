@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, it } from 'vitest';
 import type { NightFiguresView, NightView } from '#shared/contracts/numbers.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
 import { garwoodRows } from '#tests/reference/numbers/rate-tables.ts';
@@ -6,25 +6,15 @@ import { signedIn, signIn } from '#tests/support/actors.ts';
 import { ask } from '#tests/support/ask.ts';
 import { freshSlug } from '#tests/support/builders.ts';
 import { fixedClock } from '#tests/support/clock.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
 import { aDevice, type EventGiven } from '#tests/support/device.ts';
 import { aLeague, good, refused } from '#tests/support/league-house.ts';
 import { aRevision, CAN } from '#tests/support/sample-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { served } from '#tests/support/served.ts';
 
 const MIN = 60_000;
 const HOUR = 60 * MIN;
 const clock = fixedClock('2026-05-14T17:30:00Z');
-let database: TestDatabase;
-let server: TestServer;
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock });
-});
-afterAll(async () => {
-  await server.close();
-  await database.close();
-});
+const { server } = await served({ clock });
 
 /** A house of four lanes that is open from six to ten in the evening, every day: sixteen lane hours. */
 async function house(given: { zone?: string; opening?: { from: number; to: number } } = {}) {

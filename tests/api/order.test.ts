@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import type { DeviceData } from '#shared/domain/journal/fact.ts';
 import { businessDayAt } from '#shared/domain/business-day.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
@@ -6,11 +6,10 @@ import { checkReplay } from '#server/platform/journal/replay-check.ts';
 import { signedIn } from '#tests/support/actors.ts';
 import { ask } from '#tests/support/ask.ts';
 import { aCentre } from '#tests/support/builders.ts';
-import { type FixedClock, fixedClock } from '#tests/support/clock.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
+import { fixedClock } from '#tests/support/clock.ts';
 import { deviceAt } from '#tests/support/device.ts';
 import { aNight, ASKED_AT_THE_LANE, canonical, deliveries, type Night, type NightAct, type NightEvent, NIGHT_FROM } from '#tests/support/night.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { served } from '#tests/support/served.ts';
 
 const HOUR = 3_600_000;
 const SEEDS = [1, 2, 3, 4, 5];
@@ -18,19 +17,8 @@ const KINDS = 20;
 /** Events a request, as a gateway that was away sends them. */
 const BATCH = 400;
 
-let database: TestDatabase;
-let server: TestServer;
-let clock: FixedClock;
-
-beforeAll(async () => {
-  clock = fixedClock(new Date(NIGHT_FROM).toISOString());
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock, ingestRate: { perSecond: 1e6, burst: 1e6 } });
-});
-afterAll(async () => {
-  await server.close();
-  await database.close();
-});
+const clock = fixedClock(new Date(NIGHT_FROM).toISOString());
+const { server, database } = await served({ clock, ingestRate: { perSecond: 1e6, burst: 1e6 } });
 
 const goTo = (at: number): void => void clock.set(new Date(Math.round(at)).toISOString());
 

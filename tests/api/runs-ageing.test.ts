@@ -1,32 +1,22 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import type * as z from 'zod/mini';
 import type { FloorSnapshot } from '#shared/contracts/floor.ts';
 import type { machineDetail } from '#shared/contracts/runs.ts';
 import { signIn } from '#tests/support/actors.ts';
 import { ask } from '#tests/support/ask.ts';
 import { fixedClock } from '#tests/support/clock.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
 import type { EventGiven } from '#tests/support/device.ts';
 import { floorHouse } from '#tests/support/floor-house.ts';
 import { good } from '#tests/support/league-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { served } from '#tests/support/served.ts';
 
 const START = '2026-05-14T18:00:00Z';
 const MIN = 60_000;
 const HOUR = 60 * MIN;
 const clock = fixedClock(START);
 const at = (minutes: number): number => Date.parse(START) + minutes * MIN;
-let database: TestDatabase;
-let server: TestServer;
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock });
-});
+const { server } = await served({ clock });
 beforeEach(() => void clock.set(START));
-afterAll(async () => {
-  await server.close();
-  await database.close();
-});
 
 const dressed = (lane: number, minutes: number): EventGiven => (
   { type: 'run.lane.dressed', data: { machine: 'm1', run: '118', lane, startedAt: new Date(at(minutes - 2)).toISOString(), finishedAt: new Date(at(minutes)).toISOString() }, time: at(minutes) });

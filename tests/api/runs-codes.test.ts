@@ -1,26 +1,16 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { fixedClock } from '#tests/support/clock.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
 import { good } from '#tests/support/league-house.ts';
 import { runEvents, runsHouse } from '#tests/support/runs-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { served } from '#tests/support/served.ts';
 
 const START = '2026-05-14T18:00:00Z';
 const clock = fixedClock(START);
 const at = (minutes: number): number => Date.parse(START) + minutes * 60_000;
 const house = () => runsHouse(server, at);
 const { started, dressed } = runEvents(at);
-let database: TestDatabase;
-let server: TestServer;
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock });
-});
+const { server } = await served({ clock });
 beforeEach(() => void clock.set(START));
-afterAll(async () => {
-  await server.close();
-  await database.close();
-});
 
 describe('a machine that counts its runs from one every day', () => {
   it('writes over no run of the day before, whichever arrives first', async () => {

@@ -1,27 +1,17 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import type { RunDetail } from '#shared/contracts/runs.ts';
 import { signedIn } from '#tests/support/actors.ts';
 import { fixedClock } from '#tests/support/clock.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
 import { good, refused } from '#tests/support/league-house.ts';
 import { runEvents, runsHouse } from '#tests/support/runs-house.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { served } from '#tests/support/served.ts';
 
 const START = '2026-05-14T18:00:00Z';
 const MIN = 60_000;
 const clock = fixedClock(START);
 const at = (minutes: number): number => Date.parse(START) + minutes * MIN;
-let database: TestDatabase;
-let server: TestServer;
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock });
-});
+const { server, database } = await served({ clock });
 beforeEach(() => void clock.set(START));
-afterAll(async () => {
-  await server.close();
-  await database.close();
-});
 
 const house = () => runsHouse(server, at);
 const { started, dressed, skipped } = runEvents(at);

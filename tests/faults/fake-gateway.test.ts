@@ -3,35 +3,23 @@ import { createServer, type Server } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { afterAll, afterEach, describe, expect, it } from 'vitest';
 import { businessDayAt } from '#shared/domain/business-day.ts';
 import { systemClock } from '#server/platform/clock.ts';
 import { aCentre } from '#tests/support/builders.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
 import { eveningZone } from '#tests/support/league-evening.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { served } from '#tests/support/served.ts';
 import { HOUSE, SOURCES } from '../../server/fakes/gateway/invented-house.ts';
 import type { DemoPlan } from '../../server/fakes/gateway/plan-file.ts';
 import { live, nightAt, replay } from '../../server/fakes/gateway/player.ts';
 import { sendAll } from '../../server/fakes/gateway/sender.ts';
 import { openSpool } from '../../server/fakes/gateway/spool.ts';
 
-let database: TestDatabase;
-let server: TestServer;
-let dataDir: string;
-
-beforeAll(async () => {
-  database = await freshDatabase();
-  server = await startServer({ db: database.db, clock: systemClock, ingestRate: { perSecond: 1e6, burst: 1e6 } });
-  dataDir = mkdtempSync(join(tmpdir(), 'lanewright-gateway-'));
-});
+const { server, database } = await served({ clock: systemClock, ingestRate: { perSecond: 1e6, burst: 1e6 } });
+const dataDir = mkdtempSync(join(tmpdir(), 'lanewright-gateway-'));
 let between: Server | null = null;
 afterEach(() => void between?.close());
-afterAll(async () => {
-  await server.close();
-  await database.close();
-  rmSync(dataDir, { recursive: true, force: true });
-});
+afterAll(() => rmSync(dataDir, { recursive: true, force: true }));
 
 /** A house for the gateways, with a key each. */
 async function plan(zone = 'UTC', first: Pick<DemoPlan, 'firstDate' | 'anchorAt'> = { firstDate: '2020-01-01', anchorAt: 0 }): Promise<{ plan: DemoPlan; centreId: Buffer }> {

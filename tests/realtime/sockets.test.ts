@@ -1,6 +1,6 @@
 import { setTimeout as pause } from 'node:timers/promises';
 import { io, type Socket } from 'socket.io-client';
-import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import type { FloorDelta, FloorSnapshot } from '#shared/contracts/floor.ts';
 import type { Heartbeat, Topic } from '#shared/realtime/events.ts';
 import type { CentreRef } from '#server/platform/http/route.ts';
@@ -8,28 +8,19 @@ import { openDisplay, signedIn } from '#tests/support/actors.ts';
 import { ask } from '#tests/support/ask.ts';
 import { aCentre } from '#tests/support/builders.ts';
 import { fixedClock } from '#tests/support/clock.ts';
-import { freshDatabase, type TestDatabase } from '#tests/support/db.ts';
 import { aDevice, type Device } from '#tests/support/device.ts';
-import { startServer, type TestServer } from '#tests/support/server.ts';
+import { served } from '#tests/support/served.ts';
 
 type Reply = { ok: boolean; code?: string; rooms: string[] };
 
+const clock = fixedClock('2026-05-14T18:00:00Z');
+const { server } = await served({ clock });
+
 describe('sockets', () => {
-  const clock = fixedClock('2026-05-14T18:00:00Z');
-  let database: TestDatabase;
-  let server: TestServer;
   let centre: CentreRef;
   let device: Device;
   const sockets: Socket[] = [];
 
-  beforeAll(async () => {
-    database = await freshDatabase();
-    server = await startServer({ db: database.db, clock });
-  });
-  afterAll(async () => {
-    await server.close();
-    await database.close();
-  });
   beforeEach(async () => {
     centre = await aCentre(server.slices.centre);
     device = await aDevice(server, centre);

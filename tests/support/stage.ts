@@ -2,8 +2,8 @@ import type { BrowserContextOptions, Page } from 'playwright-core';
 import { afterAll, afterEach } from 'vitest';
 import { systemClock } from '#server/platform/clock.ts';
 import { openBrowser, type TestBrowser } from './browser.ts';
-import { freshDatabase } from './db.ts';
-import { startServer, type TestServer } from './server.ts';
+import { served } from './served.ts';
+import type { TestServer } from './server.ts';
 
 export interface Stage<H> {
   server: TestServer;
@@ -18,14 +18,9 @@ export interface Stage<H> {
  * at the top of the file; all of it ends with the file, and the screens with each test (with the last one where they are kept).
  */
 export async function stage<H>(furnish: (server: TestServer) => Promise<H>, { keepScreens = false } = {}): Promise<Stage<H>> {
-  const database = await freshDatabase();
-  const server = await startServer({ db: database.db, clock: systemClock });
+  const { server } = await served({ clock: systemClock });
   const browser = await openBrowser();
   if (!keepScreens) afterEach(() => browser.closePages());
-  afterAll(async () => {
-    await browser.closePages().finally(() => browser.close());
-    await server.close();
-    await database.close();
-  });
+  afterAll(() => browser.closePages().finally(() => browser.close()));
   return { server, browser, house: await furnish(server), screen: (who, options) => browser.page(server.url, who, options) };
 }
